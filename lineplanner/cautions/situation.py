@@ -11,11 +11,12 @@ from lineplanner.geometry import Pose, traps_gas
 from lineplanner.inputs.bath import Bath
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.line import Rectifier
-from lineplanner.inputs.recipe import Recipe
+from lineplanner.inputs.recipe import Recipe, SideStep
 from lineplanner.load import LoadAreas
 from lineplanner.program.stages import Run
-from lineplanner.quantities import Concentration, Current, Flow, Ratio, Stress
+from lineplanner.quantities import Concentration, Current, Flow, Ratio, Stress, Temperature
 
+_HOT = frozenset({"hot-water-seal", "dichromate-seal", "nickel-seal", "oven"})  # contents that are run hot
 _WATER = 1000.0  # kg/m^3; for the mass share of dilute boric acid
 
 # What a recipe's side step means to the caution rules.
@@ -55,6 +56,7 @@ def situation_of(case: Case, areas: LoadAreas, run: Run | None, gas: Gas) -> Sit
         heater=tank.heater,
         heater_guards_confirmed=tank.heater_guards,
         steps=frozenset(_STEPS[s.content] for s in (*recipe.before, *recipe.after)),
+        hottest_step=_hottest([*recipe.before, *recipe.after]),
         stop_off=frozenset(m.kind for h in case.load.hangs for m in case.parts[h.part].masks),
         shower_confirmed=tank.shower,
         live_entry=recipe.live_entry,
@@ -70,6 +72,13 @@ def situation_of(case: Case, areas: LoadAreas, run: Run | None, gas: Gas) -> Sit
         **_air(case),
         **_steel(areas, recipe),
     )
+
+
+def _hottest(steps: list[SideStep]) -> Temperature | None:
+    """The hottest side step; None while a step that is run hot does not say how hot."""
+    if any(s.temperature is None and s.content in _HOT for s in steps):
+        return None
+    return max((s.temperature for s in steps if s.temperature is not None), default=None)
 
 
 def _bath(bath: Bath) -> dict[str, Any]:

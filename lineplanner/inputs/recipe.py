@@ -51,6 +51,7 @@ class SideStep:
     time: Annotated[Time, Field(TIME, "time", low=0.0)] = 0.0
     content: Annotated[Content, Field(None, "what it holds", "decides the cautions")] = "other"
     removed: Annotated[Thickness, Field(THICKNESS, "metal removed per side", low=0.0)] = 0.0
+    temperature: Annotated[Temperature | None, Field(TEMPERATURE, "temperature")] = None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -38,14 +38,15 @@ def test_the_id_decides_between_equal_ranks(chrome: tuple[Caution, ...]) -> None
 
 def test_what_kills_at_once_comes_before_what_kills_slowly(texts: CautionTexts) -> None:
     dangers = [one.id for one in everything(texts) if one.word == "DANGER"]
-    # our own judgement: entry, shock and fire act in seconds, burns in minutes, chromium in years
+    # our own judgement: entry, shock and gas kill in seconds, HF in hours; then the bath itself, then the rest of the line
     for quick, slow in [
         ("tank-entry", "acid-burn"),
         ("dc-60", "acid-burn"),
         ("h2-rich", "acid-burn"),
         ("h2-foam", "acid-burn"),
         ("fluoride-hf", "acid-burn"),
-        ("acid-burn", "cr6-core"),
+        ("cr6-core", "acid-burn"),
+        ("acid-burn", "no-mix"),
     ]:
         assert dangers.index(quick) < dangers.index(slow)
 
