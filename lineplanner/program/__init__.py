@@ -1,0 +1,1 @@
+"""Load, recipe and circuit give stages, current, duration, volts and thickness."""

@@ -1,0 +1,113 @@
+"""Stages of a current program, and what one run of it gives."""
+
+from dataclasses import dataclass
+from typing import Literal
+
+from lineplanner.inputs.line import Rectifier
+from lineplanner.quantities import Charge, Current, CurrentDensity, Thickness, Time, Voltage
+
+StageName = Literal["wait", "ramp", "step", "hold", "reverse", "strike", "plate", "restart"]
+Control = Literal["current", "voltage", "off"]
+Polarity = Literal["work anodic", "work cathodic", "off"]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Stage:
+    """One stage: currents are linear in time between its ends and never negative; polarity carries the sign.
+
+    Voltages are at the rectifier's terminals: an estimate under current control, the setting under voltage control.
+    density is that of the part at the stage's end, per carrying area.
+    """
+
+    stage: StageName
+    control: Control
+    polarity: Polarity
+    start: Time
+    end: Time
+    from_current: Current
+    to_current: Current
+    from_voltage: Voltage
+    to_voltage: Voltage
+    density: CurrentDensity
+
+    @property
+    def duration(self) -> Time:
+        return self.end - self.start
+
+    @property
+    def charge(self) -> Charge:
+        return 0.5 * (self.from_current + self.to_current) * (self.end - self.start)
+
+    @property
+    def peak(self) -> Current:
+        return max(self.from_current, self.to_current)
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class ItemRun:
+    """One item of the load in a run: its current (all its parts), its density and the thickness it gets."""
+
+    part: str
+    current: Current
+    density: CurrentDensity
+    thickness: Thickness
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Run:
+    """The program run on one rectifier: stages, time, charge, thickness, volts. None: no number to set."""
+
+    rectifier: Rectifier | None
+    stages: tuple[Stage, ...]
+    set_current: Current | None
+    panel_current: Current | None
+    peak_current: Current
+    total_time: Time | None
+    time_at_set: Time | None
+    forward: Charge | None
+    reverse: Charge | None
+    thickness: Thickness | None
+    reachable: Thickness | None
+    items: tuple[ItemRun, ...]
+    start_voltage: Voltage | None
+    end_voltage: Voltage | None
+    peak_voltage: Voltage | None
+    voltage_limit: Voltage | None
+    limit_reached: Time | None
+    stretch: float
+
+    @property
+    def counter(self) -> Charge | None:
+        """What the ampere-hour counter shows: forward and reverse added."""
+        return None if self.forward is None or self.reverse is None else self.forward + self.reverse
+
+
+def unreachable(
+    *,
+    rectifier: Rectifier,
+    set_current: Current | None,
+    peak_current: Current,
+    reachable: Thickness,
+    voltage_limit: Voltage | None,
+) -> Run:
+    """A run without a number to set: no time reaches the aim; what is reached at most."""
+    return Run(
+        rectifier=rectifier,
+        stages=(),
+        set_current=set_current,
+        panel_current=None,
+        peak_current=peak_current,
+        total_time=None,
+        time_at_set=None,
+        forward=None,
+        reverse=None,
+        thickness=None,
+        reachable=reachable,
+        items=(),
+        start_voltage=None,
+        end_voltage=None,
+        peak_voltage=None,
+        voltage_limit=voltage_limit,
+        limit_reached=None,
+        stretch=0.0,
+    )
