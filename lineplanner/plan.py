@@ -32,10 +32,11 @@ from lineplanner.load import LoadAreas, load_areas
 from lineplanner.load.story import area_figures
 from lineplanner.program.aims import Aims
 from lineplanner.program.band import Input, band_of
-from lineplanner.program.checks import check_aim, check_load
+from lineplanner.program.checks import check_aim, check_deviations, check_load
 from lineplanner.program.chrome import Start, start_of
 from lineplanner.program.emissions import Emissions, emissions_of
 from lineplanner.program.job import Job
+from lineplanner.program.outcome import Outcome, outcome_of
 from lineplanner.program.recipe_for import as_run, job_of, process_of
 from lineplanner.program.runner import Runner, runner_of
 from lineplanner.program.stages import Run
@@ -80,6 +81,7 @@ class Plan:
     others: tuple[tuple[str, Finding | None], ...]
     thickness: Thicknesses
     emissions: Emissions | None
+    outcome: Outcome | None
     start: Start | None
     findings: tuple[Finding, ...]
     binding: Finding | None
@@ -99,7 +101,7 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
     case = as_run(case)
     process = process_of(case)
     areas = load_areas(case, process)
-    if areas.carrying <= 0.0:
+    if areas.parts_carrying <= 0.0:
         return _nothing_wet(case, filed, changed, areas, circuit_of(case, areas, process))
     circuit = circuit_of(case, areas, process)
     job = job_of(case, process, areas, circuit.resistance)
@@ -110,8 +112,14 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
     emissions = (
         emissions_of(job, run, efficiency=runner.efficiency, film_share=runner.film_share) if run else None
     )
+    figures = _figures(job, runner, run, circuit, thickness, emissions)
+    outcome = outcome_of(job, runner, run, figures) if run else None
     findings = ranked_findings(
-        [*check_load(job), *_run_findings(job, runner, proposal, circuit, thickness, emissions)]
+        [
+            *check_deviations(changed),
+            *check_load(job),
+            *_run_findings(job, runner, proposal, circuit, thickness, emissions),
+        ]
     )
     return Plan(
         case=case,
@@ -127,11 +135,12 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
         others=proposal.others if proposal else (),
         thickness=thickness,
         emissions=emissions,
+        outcome=outcome,
         start=start_of(job) if process.name == "chrome-hard" else None,
         findings=findings,
         binding=binding(findings),
         cautions=_cautions(case, areas, run, emissions),
-        figures=_figures(job, runner, run, circuit, thickness, emissions),
+        figures=figures if outcome is None else {**figures, **outcome.figures},
         position="default" if shares is None else "map",
     )
 
@@ -272,6 +281,7 @@ def _nothing_wet(
         others=(),
         thickness=Thicknesses(expected=None, low=None, high=None, band=None),
         emissions=None,
+        outcome=None,
         start=None,
         findings=(finding,),
         binding=finding,

@@ -70,7 +70,7 @@ def merged(cautions: Iterable[Caution]) -> tuple[Caution, ...]:
     for caution in sorted(cautions, key=lambda one: one.order):
         first = kept.get(caution.id, caution)
         moments = tuple(moment for moment in MOMENTS if moment in first.moments or moment in caution.moments)
-        kept[caution.id] = replace(first, moments=moments)
+        kept[caution.id] = first if moments == first.moments else replace(first, moments=moments)
     return tuple(kept.values())
 
 

@@ -195,11 +195,10 @@ def _exhaust_sum(case: Case) -> Flow | None:
 
 def _gas_trapped(case: Case) -> bool:
     """Whether any part hangs with a hollow that faces down and keeps gas."""
-    for hang in case.load.hangs:
-        pose = Pose(0.0, 0.0, hang.turn, hang.facing == "edge-on")
-        if traps_gas(case.parts[hang.part], pose):
-            return True
-    return False
+    hung = {(hang.part, hang.turn, hang.facing) for hang in case.load.hangs}
+    return any(
+        traps_gas(case.parts[part], Pose(0.0, 0.0, turn, facing == "edge-on")) for part, turn, facing in hung
+    )
 
 
 def _installed_chrome(case: Case) -> Current:

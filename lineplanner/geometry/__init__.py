@@ -10,7 +10,6 @@ shape.py     the checked faces of a part, and its extent in the rack plane
 counting.py  what of a face counts: masks, bands, contact marks, hole rules
 areas.py     the three areas, face by face
 measure.py   volume and drawn area; drawing.py: the outline as placed; pockets.py: gas and solution kept
-memo.py      results remembered for records that never change
 """
 
 from lineplanner.geometry.areas import FaceRow, Ledger, ledger

@@ -8,11 +8,11 @@ from typing import Annotated
 from lineplanner.errors import Quantity
 from lineplanner.geometry.counting import Count, Reason, Rules, count
 from lineplanner.geometry.faces import Shape
-from lineplanner.geometry.memo import Memo
 from lineplanner.geometry.outline import CHORD_SAGITTA
 from lineplanner.geometry.pose import UPRIGHT, Pose, Slope, height
 from lineplanner.geometry.shape import heights, shape_of
 from lineplanner.geometry.surface import BoxShare, Flat, StraightWall
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part
 from lineplanner.quantities import AREA, LENGTH, RATIO, Area, Field, Ratio
 

@@ -5,9 +5,9 @@ import math
 import numpy as np
 from numpy.typing import NDArray
 
-from lineplanner.geometry.memo import Memo
 from lineplanner.geometry.outline import Circle, drawing_rings, lines, slot_line
 from lineplanner.geometry.pose import Pose, height, sideways
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part, Plate, Section, Stated, Tube, Turned
 
 Array = NDArray[np.float64]

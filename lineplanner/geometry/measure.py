@@ -5,8 +5,11 @@ import math
 from lineplanner.geometry.faces import Shape
 from lineplanner.geometry.shape import shape_of
 from lineplanner.geometry.surface import NO_CUTS
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part
 from lineplanner.quantities import Area, Volume
+
+_DRAWN: Memo[Part, float] = Memo(512)
 
 
 def volume(part: Part) -> Volume:
@@ -57,7 +60,7 @@ def drawn_total(part: Part) -> Area:
         >>> round(drawn_total(plate) * 1e2, 3)
         2.08
     """
-    return _drawn(shape_of(part))
+    return _DRAWN.get(part, None, lambda: _drawn(shape_of(part)))
 
 
 def _drawn(shape: Shape) -> float:

@@ -14,6 +14,7 @@ from numpy.typing import NDArray
 from lineplanner.geometry.outline import Circle, Line
 from lineplanner.geometry.pose import Slope
 from lineplanner.geometry.surface import StraightWall, disc_below, stretches
+from lineplanner.inputs.memo import Memo
 
 Array = NDArray[np.float64]
 
@@ -44,6 +45,9 @@ class RoundWall:
         return np.concatenate(((lows + highs) / 2, self.shoulders[:, 0]))
 
     def areas(self, cuts: tuple[float, ...]) -> Array:
+        return _AREAS.get(self, cuts, lambda: self._areas(cuts))
+
+    def _areas(self, cuts: tuple[float, ...]) -> Array:
         low, low_radius, high, high_radius = self._cut(cuts)
         slant = np.hypot(high - low, high_radius - low_radius)
         walls = np.sum(math.pi * (low_radius + high_radius) * slant, axis=1)
@@ -72,6 +76,9 @@ class RoundWall:
         low, high = np.clip(lows[:, None], c0, c1), np.clip(highs[:, None], c0, c1)
         rate = (r1 - r0) / (c1 - c0)
         return low, r0 + rate * (low - c0), high, r0 + rate * (high - c0)
+
+
+_AREAS: Memo[RoundWall, Array] = Memo(4096)
 
 
 def _circle_share(x: float) -> float:

@@ -5,11 +5,13 @@ import json
 from dataclasses import fields, is_dataclass, replace
 from typing import Literal
 
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.recipe import Recipe
 
 _APPROVAL = frozenset({"status", "approved_by", "approved_on", "approved_content"})
 _DIGITS = 10  # significant; unit spellings of one value agree to more, settings never differ by less
 _LENGTH = 16  # hexadecimal digits: no two recipes of a shop share them by chance
+_HASHES: Memo[Recipe, str] = Memo(256)
 
 
 def content_hash(recipe: Recipe) -> str:
@@ -17,6 +19,10 @@ def content_hash(recipe: Recipe) -> str:
 
     A value left at its default does not count either, so that an approval outlives a new kind of setting.
     """
+    return _HASHES.get(recipe, None, lambda: _hashed(recipe))
+
+
+def _hashed(recipe: Recipe) -> str:
     text = json.dumps(
         _plain(recipe, leave_out=_APPROVAL), sort_keys=True, ensure_ascii=True, separators=(",", ":")
     )

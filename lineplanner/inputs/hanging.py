@@ -5,6 +5,7 @@ from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 from lineplanner.inputs.load import Hang
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.rack import Rack, TipRow
 from lineplanner.quantities import Length
 
@@ -21,8 +22,16 @@ class Tip:
     row: TipRow
 
 
+_PLACES: Memo[Rack, Mapping[str, Tip]] = Memo(64)
+_NAMES: Memo[Hang, tuple[str, ...]] = Memo(4096)
+
+
 def tip_places(rack: Rack) -> Mapping[str, Tip]:
     """Every tip of a rack by name: row name and number from 1, in the order of the rows."""
+    return _PLACES.get(rack, None, lambda: _placed(rack))
+
+
+def _placed(rack: Rack) -> Mapping[str, Tip]:
     places: dict[str, Tip] = {}
     for row in rack.tips:
         for index in range(row.count):
@@ -39,7 +48,7 @@ def tip_names(hang: Hang) -> tuple[str, ...]:
     >>> tip_names(Hang(part="lug", tips=("A1-A3", "B2")))
     ('A1', 'A2', 'A3', 'B2')
     """
-    return tuple(name for entry in hang.tips for name in _expanded(entry))
+    return _NAMES.get(hang, None, lambda: tuple(name for entry in hang.tips for name in _expanded(entry)))
 
 
 def _expanded(entry: str) -> Iterator[str]:
@@ -59,8 +68,9 @@ def spots_of(hang: Hang, places: Mapping[str, Tip]) -> tuple[tuple[Length, Lengt
     """
     if hang.at:
         return hang.at
-    names = tip_names(hang)
-    each = hang.tips_each
+    names, each = tip_names(hang), hang.tips_each
+    if each == 1:
+        return tuple((places[name].x, places[name].drop) for name in names)
     groups = [[places[name] for name in names[i : i + each]] for i in range(0, len(names), each)]
     return tuple((sum(t.x for t in g) / len(g), sum(t.drop for t in g) / len(g)) for g in groups)
 

@@ -12,7 +12,7 @@ from lineplanner.inputs.rack import Member, Rack
 from lineplanner.inputs.tables import Tables
 from lineplanner.quantities import VOLTAGE
 
-
+_MOST_NAMES = 20
 _NOISE = 1e-12  # relative; what two spellings of one value may differ by after conversion
 
 
@@ -22,8 +22,9 @@ def exceeds(value: float, limit: float) -> bool:
 
 
 def known(names: Iterable[str]) -> str:
-    """Names as a message lists them."""
-    return ", ".join(f"`{name}`" for name in names) or "none"
+    """Names as a message lists them: not so many that it cannot be read."""
+    every = [f"`{name}`" for name in names]
+    return ", ".join(every[:_MOST_NAMES] + ["..."] * (len(every) > _MOST_NAMES)) or "none"
 
 
 def twice(names: Sequence[str], path: Path, what: str, last: str = "name") -> list[Problem]:

@@ -1,6 +1,6 @@
 """Parts on their places: the areas of the load, item by item."""
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass, field
 from functools import partial
 
@@ -102,16 +102,23 @@ class _Sum:
     contact_current: float | None = None
     contact_metal: str = ""
     ledger: Ledger | None = None
+    seen: set[tuple[int, int]] = field(default_factory=set)  # identity of a row of tips, and tips to a part
 
 
 def _items(case: Case, process: ProcessDefaults, drop: Length) -> Iterator[Item]:
     sums: dict[tuple[str, str], _Sum] = {}
     places = tip_places(case.rack)
+    hung: dict[tuple[str, float, str], _Hung] = {}
     for hang in case.load.hangs:
         part = case.parts[hang.part]
+        kind = hang.part, hang.turn, hang.facing
+        if kind not in hung:
+            hung[kind] = _hung(part, hang, process)
         material = hang.material or part.material
-        total = sums.setdefault((hang.part, material), _Sum(case.materials[material]))
-        for part_ledger, number in _ledgers(part, hang, places, process, drop):
+        if (hang.part, material) not in sums:
+            sums[hang.part, material] = _Sum(case.materials[material])
+        total = sums[hang.part, material]
+        for part_ledger, number in _ledgers(hung[kind], hang, places, drop):
             _add(total, part_ledger, number)
         _add_contacts(total, case, part, hang, places)
     for (stem, _), total in sums.items():
@@ -140,10 +147,17 @@ def _items(case: Case, process: ProcessDefaults, drop: Length) -> Iterator[Item]
         )
 
 
-def _ledgers(
-    part: Part, hang: Hang, places: Mapping[str, Tip], process: ProcessDefaults, drop: Length
-) -> Iterator[tuple[Ledger, int]]:
-    """The ledger of each part of a hang with how many parts share it."""
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _Hung:
+    """A part as it hangs: its ledger in the solution, and at the levels that cut it; top above its hanging point."""
+
+    full: Ledger
+    top: Length
+    at: Callable[[Length], Ledger]
+    cut: dict[Length, Ledger] = field(default_factory=dict)
+
+
+def _hung(part: Part, hang: Hang, process: ProcessDefaults) -> _Hung:
     rule = partial(
         ledger,
         part,
@@ -151,25 +165,33 @@ def _ledgers(
         promise_ratio=process.promise_ratio.value,
         thread_factor=process.thread_factor.value,
     )
-    full = rule()
+    pose = Pose(0.0, 0.0, hang.turn, hang.facing == "edge-on")
+    return _Hung(
+        full=rule(),
+        top=extent(shape_of(part), pose)[3],
+        at=lambda level: rule(pose=pose, level=level),
+    )
+
+
+def _ledgers(
+    hung: _Hung, hang: Hang, places: Mapping[str, Tip], drop: Length
+) -> Iterator[tuple[Ledger, int]]:
+    """The ledger of each part of a hang with how many parts share it."""
     if hang.count is not None:
-        yield full, hang.count
+        yield hung.full, hang.count
         return
-    edge_on = hang.facing == "edge-on"
-    top = extent(shape_of(part), Pose(0.0, 0.0, hang.turn, edge_on))[3]
     sides = 2 if hang.side == "both" else 1
-    cut: dict[float, Ledger] = {}
     under = 0
     for _, spot_drop in spots_of(hang, places):
         level = round(spot_drop - drop, 9)  # of the solution above the hanging point
-        if top <= level:
+        if hung.top <= level:
             under += sides
             continue
-        if level not in cut:
-            cut[level] = rule(pose=Pose(0.0, 0.0, hang.turn, edge_on), level=level)
-        yield cut[level], sides
+        if level not in hung.cut:
+            hung.cut[level] = hung.at(level)
+        yield hung.cut[level], sides
     if under:
-        yield full, under
+        yield hung.full, under
 
 
 def _add(total: _Sum, part_ledger: Ledger, number: int) -> None:
@@ -187,16 +209,20 @@ def _add(total: _Sum, part_ledger: Ledger, number: int) -> None:
 def _add_contacts(total: _Sum, case: Case, part: Part, hang: Hang, places: Mapping[str, Tip]) -> None:
     """The fewest contacts, and the weakest of them, that hold one part of the item."""
     if hang.tips:
-        rows = [places[name].row for name in tip_names(hang)]
-        for row in {id(row): row for row in rows}.values():  # tips of one row are alike
+        for name in tip_names(hang):
+            row = places[name].row
+            if (id(row), hang.tips_each) in total.seen:  # tips of one row are alike
+                continue
+            total.seen.add((id(row), hang.tips_each))
             conductor = conductor_named(case.tables.conductors, row.conductor)
             rated = row.rated_current if row.rated_current is not None else conductor.contact_current.value
             _weaker(total, row.contacts * hang.tips_each, rated, row.conductor)
     elif part.contacts:
-        rated = case.rack.contact_current
-        if rated is None:
-            rated = conductor_named(case.tables.conductors, case.rack.conductor).contact_current.value
-        _weaker(total, sum(c.count for c in part.contacts), rated, case.rack.conductor)
+        own, metal = case.rack.contact_current, case.rack.conductor
+        rated = (
+            own if own is not None else conductor_named(case.tables.conductors, metal).contact_current.value
+        )
+        _weaker(total, sum(c.count for c in part.contacts), rated, metal)
 
 
 def _weaker(total: _Sum, contacts: int, rated: Current, metal: str) -> None:

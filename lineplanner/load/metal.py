@@ -1,9 +1,10 @@
 """Rack metal, tips and thieves in the solution: what is bare, and what of it is counted."""
 
 import math
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.rack import Member, Rack, Surface, Thief
 from lineplanner.inputs.tables import Conductor, Limits, ProcessDefaults
 from lineplanner.quantities import Area, Length, Ratio
@@ -29,9 +30,12 @@ class Metal:
         return self.area * self.factor
 
 
+_BY_NAME: Memo[tuple[Conductor, ...], Mapping[str, Conductor]] = Memo(16)
+
+
 def conductor_named(conductors: tuple[Conductor, ...], name: str) -> Conductor:
     """The row of the conductors table; reading a site has checked that it exists."""
-    return next(c for c in conductors if c.name == name)
+    return _BY_NAME.get(conductors, None, lambda: {c.name: c for c in conductors})[name]
 
 
 def rack_metal(

@@ -1,11 +1,12 @@
 """What recipe, alloy and substrate say about a run, apart from the line's capacity."""
 
-from collections.abc import Iterator
+from collections.abc import Iterable, Iterator
 
 from lineplanner.bath.efficiency import at_cap, bright_window_high, bright_window_low, outside_range
 from lineplanner.bath.growth import soft_share
-from lineplanner.errors import Quantity
+from lineplanner.errors import Fact, Quantity
 from lineplanner.findings import Finding, Level, lower, note, upper
+from lineplanner.inputs.change import Deviation
 from lineplanner.program.anodizing import Films, films_of, grown
 from lineplanner.program.chrome import start_of, substrate_of
 from lineplanner.program.deposition import Deposition
@@ -23,6 +24,17 @@ _PRESET = Source("substrates table", Status.PRACTICE)
 _BRIGHT = Source(
     "Modern Electroplating, chromium chapter: bright range at 40 and 45 degC, extrapolated", Status.ASSUMPTION
 )
+
+
+def check_deviations(changed: Iterable[Deviation]) -> Iterator[Finding]:
+    """A caution for each setting that the load runs outside the range of its recipe."""
+    for one in changed:
+        if not one.inside_range:
+            facts: dict[str, Fact] = {"setting": one.label, "here": Quantity(one.load, one.kind)}
+            if one.recipe is not None:
+                facts["filed"] = Quantity(one.recipe, one.kind)
+            key = "deviation.outside" if one.recipe is not None else "deviation.unnamed"
+            yield Finding("deviation", Level.CAUTION, key, _RECIPE, fix="deviation.owner", facts=facts)
 
 
 def check_load(job: Job) -> Iterator[Finding]:
@@ -287,7 +299,7 @@ def _strong_steel(job: Job) -> Iterator[Finding]:
                 strength,
                 limit.value,
                 None if strength is None else 1.0 - strength / limit.value,
-                "design-authority.enter",
+                None if level is Level.NOTE else "design-authority.enter",
                 facts,
             )
 

@@ -7,7 +7,7 @@ from typing import Protocol
 from lineplanner.findings import Finding
 from lineplanner.inputs.line import Rectifier
 from lineplanner.inputs.shares import PositionShares
-from lineplanner.program.anodizing import Films, films_of, hold_for, run_anodizing
+from lineplanner.program.anodizing import Films, films_of, hold_for, rate_of, run_anodizing
 from lineplanner.program.band import Input, forward_anodizing, forward_chrome, uncertain_inputs
 from lineplanner.program.checks import check_anodizing, check_chrome
 from lineplanner.program.chrome import run_chrome
@@ -17,7 +17,7 @@ from lineplanner.program.job import HALF_MINUTE, MINUTE, Job
 from lineplanner.program.softstart import soft_start_of
 from lineplanner.program.stages import Run
 from lineplanner.program.voltage_run import run_by_voltage
-from lineplanner.quantities import CurrentDensity, Ratio, Thickness, Time
+from lineplanner.quantities import CurrentDensity, Rate, Ratio, Thickness, Time
 from lineplanner.sources import Source
 from lineplanner.trace import Figure
 
@@ -38,6 +38,7 @@ class Runner(Protocol):
     def inputs(self, run: Run, shares: PositionShares | None) -> tuple[Input, ...]: ...
     def time_for(self, run: Run, thickness: Thickness) -> Time | None: ...
     def efficiency(self, density: CurrentDensity) -> Ratio | None: ...
+    def rate(self, run: Run) -> Rate: ...
     @property
     def film_share(self) -> Ratio: ...
 
@@ -98,6 +99,11 @@ class Anodizing:
         hold = hold_for(film, thickness, density=self.films.density(film, run.panel_current), start=start)
         return None if hold is None else start.duration + hold
 
+    def rate(self, run: Run) -> Rate:
+        """Growth of the slowest part at the last stage's current."""
+        film = self._slowest(run)
+        return rate_of(film, self.films.density(film, run.stages[-1].to_current))
+
     def efficiency(self, density: CurrentDensity) -> Ratio | None:  # noqa: ARG002 - anodizing has none
         return None
 
@@ -144,6 +150,10 @@ class Chrome:
             return None
         rate = self.deposition.rate(run.panel_current / self.job.areas.carrying)
         return run.total_time + (thickness - run.thickness) / rate if rate > 0.0 else None
+
+    def rate(self, run: Run) -> Rate:
+        """Deposit at the plating current."""
+        return self.deposition.rate(run.stages[-1].density)
 
     def efficiency(self, density: CurrentDensity) -> Ratio | None:
         return self.deposition.efficiency(density)

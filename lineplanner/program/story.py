@@ -138,7 +138,7 @@ def _times(job: Job, runner: Runner, run: Run, set_by: Figure) -> dict[str, Figu
     if run.total_time is None:
         return {}
     aim = aim_figure(job)
-    words = "lead-in stages + the time at which the slowest part has its aim, rounded up to the clock"
+    words = "the time at which the slowest part has its aim, rounded up to the clock"
     solved = result(
         "time at set current",
         run.time_at_set,
@@ -150,11 +150,15 @@ def _times(job: Job, runner: Runner, run: Run, set_by: Figure) -> dict[str, Figu
         runner.law_figure,
         set_by,
     )
-    lead_in = given(
+    before = [given(s.stage, s.duration, TIME, _stage_source(job, s)) for s in run.stages[:-1]]
+    lead_in = result(
         "lead-in stages",
         run.total_time - (run.time_at_set or 0.0),
         TIME,
-        Source("stages before: recipe, alloy and substrate tables", Status.PRACTICE),
+        "sum of the stages before the last",
+        "t_0 = sum t",
+        _ARITHMETIC,
+        *(before or [given("no stage before", 0.0, TIME, Source("recipe", Status.ENTERED))]),
     )
     total = result(
         "total time",

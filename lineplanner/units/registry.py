@@ -32,7 +32,7 @@ class Conversion(NamedTuple):
 @cache
 def registry() -> "pint.UnitRegistry[Any]":
     """The registry of our own definitions; importing pint costs most of the start-up, so it comes late."""
-    import pint  # noqa: PLC0415 (see above)
+    import pint
 
     units: pint.UnitRegistry[Any] = pint.UnitRegistry(None)
     units.load_definitions(list(definition_lines()))
@@ -79,7 +79,7 @@ def _of_temperature(unit: Unit) -> Conversion:
 
 
 def _factor(source: str, target: str) -> float:
-    import pint  # noqa: PLC0415 (loaded by the registry anyway)
+    import pint
 
     try:
         return float(registry().convert(1.0, source, target))

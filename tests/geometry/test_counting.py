@@ -9,10 +9,10 @@ import math
 from typing import Any
 
 import pytest
-from hypothesis import given, settings
+from hypothesis import assume, given, settings
 from hypothesis import strategies as st
 
-from lineplanner.geometry import FaceRow, Ledger, Pose
+from lineplanner.geometry import FaceRow, Ledger, Pose, problems
 from lineplanner.inputs.part import Bore, ContactMark, Hole, Mask, Outline, Part, Plate, Slot, Texture
 from tests.geometry.parts import (
     MM,
@@ -315,6 +315,7 @@ def test_a_zone_raises_nothing_and_covers_at_most_itself(
     bare = plate(holes=(hole(10, 5, 12), hole(-20, -10, 8, 3)))
     mask = Mask(face="front", outline=rectangle(width, height), at=(u * MM, v * MM))
     part = plate(holes=bare.holes, masks=(mask,))
+    assume(not problems(part))  # a zone wholly inside a hole covers nothing and is refused
     level = between(part, pose, share)
     before, after = row(areas(bare, pose, level), "front"), row(areas(part, pose, level), "front")
     assert after.wet_area <= before.wet_area * (1 + 1e-9)

@@ -1,7 +1,6 @@
 """Where a placed part is, how it is drawn, and what it keeps: extent, silhouette, pockets. Sizes in mm."""
 
 import math
-from typing import Any
 
 import numpy as np
 import pytest
@@ -9,7 +8,6 @@ import shapely
 from hypothesis import given, settings
 
 from lineplanner.geometry import Pose, extent, shape_of, silhouette, traps_gas, traps_liquid
-from lineplanner.geometry.memo import Memo
 from lineplanner.inputs.part import Bore, Part, Slot
 from tests.geometry.parts import (
     MM,
@@ -117,24 +115,6 @@ POCKETS: dict[str, tuple[Part, Pose, tuple[bool, bool]]] = {
 def test_a_pocket_keeps_gas_when_it_opens_down_and_solution_when_it_opens_up(name: str) -> None:
     part, pose, expected = POCKETS[name]
     assert (traps_gas(part, pose), traps_liquid(part, pose)) == expected
-
-
-def test_a_remembered_result_belongs_to_its_record_and_key() -> None:
-    made: list[Any] = []
-
-    def make(value: int) -> int:
-        made.append(value)
-        return value
-
-    memo: Memo[list[int], int] = Memo(2)
-    one, same_content = [1], [1]
-    assert memo.get(one, "a", lambda: make(1)) == 1
-    assert memo.get(one, "a", lambda: make(2)) == 1
-    assert memo.get(same_content, "a", lambda: make(3)) == 3
-    assert memo.get(one, "b", lambda: make(4)) == 4
-    assert len(memo) == 2  # the oldest has left
-    assert memo.get(one, "a", lambda: make(5)) == 5
-    assert made == [1, 3, 4, 5]
 
 
 def test_the_same_part_is_built_once_and_an_equal_one_gives_equal_areas() -> None:

@@ -1,4 +1,4 @@
-"""Remembered results for records that never change."""
+"""Remembered results for records that never change. It lives here because every room may import inputs."""
 
 import threading
 from collections.abc import Callable, Hashable
@@ -11,7 +11,8 @@ Result = TypeVar("Result")
 class Memo(Generic[Record, Result]):
     """Results by the identity of a frozen record and a key; the oldest leave when it is full.
 
-    A record is kept with its result, so that its identity cannot pass to another one meanwhile.
+    A record is kept with its result, so that its identity cannot pass to another one meanwhile. The result
+    may depend on nothing but record and key; whoever gets it must not change it.
     """
 
     __slots__ = ("_kept", "_lock", "_room")

@@ -1,0 +1,1 @@
+"""Sites on disk: TOML read with all problems at once, saved atomically."""

@@ -1,0 +1,180 @@
+"""The sentences of what can be wrong in a file: what is wrong, then what to do. Facts in braces."""
+
+# The file as a whole.
+_FILE = {
+    "file.missing": "there is no such file. Check the name and the folder",
+    "file.folder": "is a folder, not a file. Name a .toml file in it",
+    "file.not_ordinary": "is not an ordinary file but a pipe or a device. Name a .toml file",
+    "file.permission": "may not be read by this user. Ask the owner of the file for the right to read it",
+    "file.unreadable": "cannot be read: {why}. Check the disk or the network share",
+    "file.too_large": "has {size} bytes; at most {most} are read. Files of this kind are small: check what it is",
+    "file.utf16": "is UTF-16 text. Save it again as UTF-8",
+    "file.not_utf8": "holds a character that is not UTF-8. Save the file again as UTF-8",
+    "file.binary": "is a binary file, not text. Name a .toml file",
+    "file.empty": 'is empty. Its first line must be such as `format = "lineplanner part 1"`',
+    "file.more": "and {count} more problems. Put the first ones right and check again",
+    "file.stem": "`{stem}` cannot be referred to. Name the file in lower case letters, digits and hyphens",
+    "file.two_of_one_name": "`{stem}` is also the name of {other}. Rename one of the two: references are file names",
+    "file.changed": "was changed on disk after it was read, and is left as it is. Read it again, then change it",
+    "file.exists": "is there already and is left as it is. Choose another name",
+    "file.not_written": "cannot be written: {why}. Nothing was changed",
+    "format.missing": 'has no format line. Begin the file with a line such as `format = "lineplanner {kind} 1"`',
+    "format.not_ours": "`{token}` is not a format of lineplanner. Write `lineplanner KIND 1` with one of {kinds}",
+    "format.near": "`{token}` is not a kind of file. The nearest is `lineplanner {nearest} 1`",
+    "format.newer": "`{token}` was written for a newer lineplanner; this one reads version 1. Update lineplanner",
+    "format.other_kind": "`{token}` is not the kind wanted here. This place takes `lineplanner {kind} 1`",
+}
+
+# TOML itself: how the text is written.
+_TOML = {
+    "toml.twice": "is given twice, first on line {first}. Take one of the two out",
+    "toml.after_value": '`{text}` has something behind the value. Put a value with its unit in quotes: `"24 A/ft2"`',
+    "toml.open_list": "a list is not closed, or a comma is missing in it. Check the `[`, `,` and `]` up to here",
+    "toml.open_table": "a table in braces is not closed, or a comma is missing in it. Check the braces up to here",
+    "toml.open_text": "a text in quotes is not closed. Add the closing quote on the line where it begins",
+    "toml.no_equals": "`{text}` has no equals sign behind its key. Write `key = value`",
+    "toml.key": "`{text}` has no key where one must be. A table in braces stands on one line and ends without a comma",
+    "toml.header": "`{text}` has a table name that is not closed. Write `[name]` or `[[name]]`",
+    "toml.backslash": "`{text}` holds a backslash that stands for nothing. Write it twice, or use single quotes",
+    "toml.character": "`{text}` holds a control character. Take it out",
+    "toml.value": "`{text}` has no value that TOML knows. Put words and values with a unit in quotes",
+    "toml.number": "holds a number of thousands of digits. Give a number that an instrument can show",
+    "toml.too_deep": "has tables or lists nested far too deeply. No file of lineplanner needs more than six levels",
+    "toml.other": "`{text}` is not written as TOML. Compare the line with those around it",
+}
+
+# Keys and values.
+_VALUES = {
+    "key.missing": "is missing: {label}. Add a line such as `{line}`",
+    "key.unknown": "`{key}` is not a key here. Keys here: {keys}",
+    "key.unknown_near": "`{key}` is not a key here. The nearest is `{nearest}`",
+    "form.missing": 'is missing: the form of the part. Add `form = "plate"` or another of {forms}',
+    "form.unknown": "`{token}` is not a form of part. Choose one of {forms}",
+    "value.no_unit": '`{token}` has no unit. Give the {kind} as text with its unit, such as `"{example}"`',
+    "value.not_text": '`{token}` is not a {kind}. Give it as text with its unit, such as `"{example}"`',
+    "value.not_finite": "`{token}` is not a number that can be used. Give an ordinary number",
+    "value.unknown": "`unknown` is not taken here. Give the value",
+    "value.low": "`{token}` is less than the least allowed, {limit}. Check number and unit",
+    "value.above": "`{token}` is not more than {limit}. Check number and unit",
+    "value.high": "`{token}` is more than the most allowed, {limit}. Check number and unit",
+    "value.below": "`{token}` is not less than {limit}. Check number and unit",
+    "value.not_count": "`{token}` is not a whole number. Write it without quotes and without a point",
+    "value.not_words": '`{token}` is not text. Put it in quotes: `"{token}"`',
+    "value.characters": "`{token}` holds characters that cannot be shown. Take them out",
+    "value.empty": "is empty: {label}. Put a name or a few words between the quotes",
+    "value.not_yes_no": "`{token}` is neither true nor false. Write `true` or `false` without quotes",
+    "value.not_date": "`{token}` is not a date. Write year, month and day, as in `2026-03-14`",
+    "value.choice": "`{token}` is not a choice here. Choose one of {choices}",
+    "value.choice_near": "`{token}` is not a choice here; the nearest is `{nearest}`. Choose one of {choices}",
+    "value.not_pair": '`{token}` is not a pair of lengths. Write two in a list, as in `["10 mm", "25 mm"]`',
+    "value.not_list": "`{token}` is not a list. Put it in square brackets",
+    "value.one_table": "is a single table where several may stand. Write `[[{key}]]` with two brackets each side",
+    "value.not_table": "`{token}` is not a table. Give its keys and values in braces or under a heading of its own",
+    "value.no_source": '`{token}` has no source. Write `{{ value = ..., source = "...", status = "..." }}`',
+    "value.not_setting": "`{token}` is not a setting. Give one value, or `{{ value = ..., low = ..., high = ... }}`",
+}
+
+# References and the site.
+_SITE = {
+    "reference.none": "`{token}` is not a {kind} of this site. There is none in {folder}",
+    "reference.unknown": "`{token}` is not a {kind} of this site. There are {stems}",
+    "reference.near": "`{token}` is not a {kind} of this site. The nearest is `{nearest}`",
+    "site.no_folder": "there is no such folder. Name the folder that holds configs and rack_library",
+    "site.not_a_site": "holds no {missing}. Name the folder that holds configs and rack_library",
+    "site.no_tables": "there is no file of format `lineplanner {kind} 1` here. `lineplanner start DIR` writes one",
+    "format.not_a_table": "this folder holds standards tables only. Write a format of {kinds}",
+    "table.no_row": "the {table} table of the standards has no row `{name}`. Add the row, or correct the name",
+    "site.two_tables": "gives what {other} gives too. Only one file may be `lineplanner {kind} 1`",
+    "start.taken": "holds {name} already, and is left as it is. Name an empty or a new folder",
+    "start.not_a_folder": "is not a folder. Name an empty or a new folder",
+}
+
+# Rules between fields.
+_RULES = {
+    "name.twice": "`{name}` is the name of another {what} already. Give each its own name",
+    "conductor.unknown": "`{name}` is not in the conductors table. It knows {known}",
+    "rack.member_size": "`{name}` has no cross-section. Give width and thickness, or the diameter",
+    "rack.member_two_sizes": "`{name}` has a diameter beside width or thickness. Give one or the other",
+    "rack.member_length": "`{name}` begins and ends at the same point. Give start and end of the piece",
+    "rack.tip_step": "`{name}` has {count} tips at the same point. Give the step from one tip to the next",
+    "rack.tip_name": "tip `{tip}` of row `{name}` has the same name as one of row `{other}`. Rename a row",
+    "rack.surface": 'an aluminium rack must say what its metal is like: `"stripped"` (bare, takes current like '
+    'the parts), `"coated"` (still has its film, takes none) or `"stopped-off"` (covered, takes none). '
+    'Add `surface = "..."`',
+    "line.none": "the line has no {what}. Add `[[{key}]]`",
+    "line.tank": "`{name}` is not a tank of this line. Its tanks: {known}",
+    "line.pulses": "a phase-controlled rectifier has 3, 6 or 12 pulses. Add `pulses = 6` or what the nameplate says",
+    "line.no_pulses": 'a switch-mode rectifier has no pulses. Take the line out, or write `type = "phase-controlled"`',
+    "line.full_on": "full phase-on gives {full}, less than the rated {rated}. Check both voltages",
+    "line.feeds_nothing": "the rectifier feeds no tank. Name at least one of {known}",
+    "bath.needs_sulfuric_acid": 'a {kind} bath needs its free sulfuric acid. Add `sulfuric_acid = "180 g/L"` or what '
+    "the analysis says",
+    "bath.needs_chromic_acid": 'a {kind} bath needs its chromic acid. Add `chromic_acid = "250 g/L"` or what the '
+    "analysis says",
+    "bath.needs_family": 'a {kind} bath needs its family. Add `family = "conventional"`, `"mixed-catalyst"` or '
+    '`"high-speed"`',
+    "bath.family_of_chrome": 'only a chrome bath has a family. Take the line out, or write `kind = "chrome"`',
+    "bath.growth_of_chrome": "a chrome bath has no growth law of a film. Take the line out",
+    "bath.high_speed_fluoride": 'a high-speed bath is taken as free of fluoride. Say `family = "mixed-catalyst"`, '
+    "or `fluoride = false`",
+    "recipe.no_aim": 'the recipe has no aim. Add `aim = "25 um"` or `aim_weight = "..."`',
+    "recipe.two_aims": "the aim is given as thickness and as coating weight. Keep the one that the order names",
+    "recipe.minimum": "the minimum {minimum} is more than the aim {aim}. Raise the aim or lower the minimum",
+    "recipe.maximum": "the maximum {maximum} is less than the aim {aim}. Lower the aim or raise the maximum",
+    "recipe.min_max": "the minimum {minimum} is more than the maximum {maximum}. Check both",
+    "recipe.range_low": "the value {value} is less than its own low, {limit}. Correct one of the two",
+    "recipe.range_high": "the value {value} is more than its own high, {limit}. Correct one of the two",
+    "recipe.no_density": '`{process}` is run by current. Add its density: `current_density = "24 A/ft2"`',
+    "recipe.no_control": "`{process}` needs current density or voltages. Add `current_density` or `[[voltage]]`",
+    "recipe.no_voltages": "`{process}` is run by voltage. Add a stage: `[[voltage]]` with `to` and `ramp`",
+    "recipe.hold": 'only the last voltage stage may leave out its hold. Add `hold = "10 min"`',
+    "recipe.by_current_only": "`{process}` is run by current. Take the voltage program out",
+    "recipe.own_reverse_density": '`reverse = "own"` needs its current density. Add `reverse_density = "25 A/dm2"`',
+    "recipe.own_reverse_time": '`reverse = "own"` needs its time. Add `reverse_time = "60 s"`',
+    "recipe.reverse_unused": '`reverse = "none"` leaves no use for this. Write `reverse = "own"`, or take the line out',
+    "recipe.no_bases": 'names no base metal. List alloy families or substrates, as in `bases = ["6xxx"]`',
+    "recipe.base_of_anodize": "`{name}` is not an alloy family, and `{process}` runs on aluminium. The alloys table "
+    "knows {known}",
+    "recipe.base_of_chrome": "`{name}` is not a substrate for `{process}`. The substrates table knows {known}",
+    "material.needs_family": 'aluminium needs its family, a row of the alloys table. Add `family = "..."`',
+    "material.needs_substrate": '{metal} needs its substrate, a row of the substrates table. Add `substrate = "..."`',
+    "material.family_of_aluminium": "only aluminium has an alloy family; this is {metal}. Take the line out",
+    "material.row": "`{name}` is not a row of the {table} table. It knows {known}",
+    "load.nothing": "nothing hangs on this rack. Add `[[hang]]` with a part",
+    "load.hang_one": "says where parts hang in {given} ways. Give exactly one of `tips`, `at` and `count`",
+    "load.hang_none": "does not say where the parts hang. Give one of `tips`, `at` and `count`",
+    "load.tips_each": "{tips} tips do not go round for parts on {each} tips each. Name a multiple of {each}",
+    "load.tip_unknown": "`{tip}` is not a tip of rack `{rack}`. Its tips: {known}",
+    "load.tip_twice": "tip `{tip}` is taken already on its {side}, by hang {other}. Choose another tip or side",
+    "load.tip_repeated": "tip `{tip}` is named twice in this hang. Name each tip once",
+    "load.tip_number": "`{tip}` has a tip number that no rack has. Check the numbers of the run",
+    "load.tip_side": 'tip `{tip}` holds parts on its {side} only. Say `side = "{side}"`, or choose another tip',
+    "load.not_free": 'rack `{rack}` holds parts on its tips only. Name tips, or a rack with `hanging = "free"`',
+    "load.tank": "`{name}` is not a tank of line `{line}`. Its tanks: {known}",
+    "load.rectifier": "`{name}` is not a rectifier of line `{line}`. Its rectifiers: {known}",
+    "load.feeds": "rectifier `{name}` does not feed tank `{tank}`. Those that do: {known}",
+    "load.bath": "recipe `{recipe}` runs in a {wanted} bath; tank `{tank}` holds `{bath}`, a {kind} bath. "
+    "Choose another tank or recipe",
+    "load.base": "part `{part}` is of `{material}`, which has no {label} for `{process}`. Check recipe and material",
+    "load.no_voltages": "the recipe has no voltage program that could be changed. Take the line out",
+    "load.no_density": "the recipe has no current density that could be changed. Take the line out",
+    "load.aim_weight": "the recipe aims at a coating weight, not at a thickness. Take the line out",
+    "site.limit": "`{name}` is not a limit that can be adopted. The limits: {known}",
+    "site.limit_near": "`{name}` is not a limit that can be adopted. The nearest is `{nearest}`",
+    "site.limit_twice": "`{name}` is adopted twice. Keep the entry that counts",
+}
+
+# The texts of the cautions.
+_CAUTIONS = {
+    "caution.missing": "the caution `{id}` is not there. A site may reword a caution, never take it away: copy it back",
+    "caution.unknown": "`{id}` is not a caution that lineplanner knows. Take it out, or correct the id",
+    "caution.twice": "the caution `{id}` is there twice. Keep one",
+    "caution.word_lowered": "`{word}` is weaker than this caution must be. Write `{least}` or a graver word",
+    "caution.no_moment": 'says no moment. Name at least one, as in `moment = ["before current"]`',
+    "caution.not_ascii": "holds letters outside ASCII, which not every terminal shows. Write it in plain letters",
+    "caution.values": "must show these values in braces, and no others: {values}",
+    "caution.too_long": "has up to {length} characters with its values filled in; {most} fit. Shorten it",
+    "caution.promise": "promises more than a plan can. Say what to do instead",
+}
+
+MESSAGES = {**_FILE, **_TOML, **_VALUES, **_SITE, **_RULES, **_CAUTIONS}

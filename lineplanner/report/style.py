@@ -1,0 +1,110 @@
+"""Metric or US, plain or with signs: how every figure of a report is printed."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from lineplanner import units
+from lineplanner.errors import Fact, KindOfQuantity, Quantity
+from lineplanner.quantities import KINDS
+from lineplanner.units import System
+
+# A difference of temperature reads like a temperature; units tells them apart only to read them back.
+_PLAIN: Mapping[str, str] = {"delta_degF": "degF", "delta_degC": "degC"}
+_SIGNS: Mapping[str, str] = {
+    "um": "µm",
+    "uohm": "µohm",
+    "degC": "°C",
+    "degF": "°F",
+    "dm2": "dm²",
+    "m2": "m²",
+    "ft2": "ft²",
+    "in2": "in²",
+    "cm2": "cm²",
+    "mm2": "mm²",
+    "m3": "m³",
+    "ft3": "ft³",
+    "cm3": "cm³",
+}
+# What a plain terminal gets in place of signs, also of those that people typed.
+ASCII: Mapping[str, str] = {
+    "µ": "u",
+    "μ": "u",
+    "°": "deg ",
+    "²": "2",
+    "³": "3",
+    "·": " ",
+    "×": "x",
+    "–": "-",
+    "—": "-",
+    "Ω": "ohm",
+    "°C": "degC",
+    "°F": "degF",
+}
+
+
+@dataclass(frozen=True, slots=True)
+class Style:
+    """The unit system, and whether units are written with plain letters only."""
+
+    system: System = "metric"
+    ascii: bool = False
+
+    def show(
+        self,
+        value: float,
+        kind: KindOfQuantity,
+        *,
+        unit: str | None = None,
+        step: float | None = None,
+        digits: int | None = None,
+    ) -> str:
+        """An SI value with its unit, in the digits of its kind."""
+        text = units.show(value, KINDS[kind.name], self.system, unit=unit, step=step, digits=digits)
+        return self.marked(text)
+
+    def marked(self, text: str) -> str:
+        """A shown value with the signs of this style: `50 um` or `50 µm`."""
+        number, _, unit = text.partition(" ")
+        for plain, read in _PLAIN.items():
+            unit = unit.replace(plain, read)
+        if not self.ascii:
+            unit = signed(unit)
+        return f"{number} {unit}" if unit else number
+
+    def fact(self, fact: Fact) -> str:
+        """A fact of a message: a quantity shown, words as they are."""
+        if isinstance(fact, Quantity):
+            return self.show(fact.value, fact.kind)
+        return str(fact)
+
+
+def signed(unit: str) -> str:
+    """A unit with signs in place of plain letters.
+
+    >>> signed("A/dm2"), signed("W/(m2 K)")
+    ('A/dm²', 'W/(m² K)')
+    """
+    word, text = "", ""
+    for letter in f"{unit}\n":
+        if letter.isalnum() or letter == "_":
+            word += letter
+            continue
+        text += _SIGNS.get(word, word) + letter
+        word = ""
+    return text.removesuffix("\n")
+
+
+def plain(text: str) -> str:
+    """Text in ASCII letters only; what has no plain form becomes a question mark.
+
+    >>> plain("50 µm at 20 °C, 2.4 A/dm²")
+    '50 um at 20 degC, 2.4 A/dm2'
+    """
+    for sign, letters in sorted(ASCII.items(), key=lambda pair: -len(pair[0])):
+        text = text.replace(sign, letters)
+    return text.encode("ascii", "replace").decode("ascii")
+
+
+def as_style(style: "Style | System") -> Style:
+    """A unit system alone stands for plain letters."""
+    return Style(style, ascii=True) if isinstance(style, str) else style

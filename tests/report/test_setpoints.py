@@ -1,0 +1,158 @@
+"""The three lines that come first: what to set, whether it may run, what can hurt now."""
+
+from collections.abc import Callable
+from dataclasses import replace
+
+import pytest
+
+from lineplanner.findings import Finding, Level, note, upper
+from lineplanner.plan import Plan
+from lineplanner.quantities import CURRENT, VOLTAGE
+from lineplanner.report.setpoints import caution_line, setpoint_lines, verdict_line
+from lineplanner.report.style import Style
+from lineplanner.sources import Source, Status
+
+METRIC = Style("metric", ascii=True)
+NAMEPLATE = Source("nameplate", Status.ENTERED)
+PRACTICE = Source("usual", Status.PRACTICE)
+
+Demo = Callable[[str], Plan]
+
+
+@pytest.fixture
+def sketch(demo: Demo) -> Plan:
+    """A hard anodize load with round figures: 148 A, ramp of 5 min, 41.5 min, 24 to 51 V."""
+    made = demo("valve-blocks-24")
+    assert made.run is not None
+    run = replace(
+        made.run,
+        panel_current=148.0,
+        total_time=2490.0,
+        forward=96.1 * 3600.0,
+        start_voltage=24.0,
+        end_voltage=51.0,
+        limit_reached=None,
+    )
+    areas = replace(made.areas, carrying=0.617)
+    return replace(made, run=run, areas=areas, findings=(OK, OTHER), binding=OK)
+
+
+OK = upper("contacts", value=7.1, limit=10.0, kind=CURRENT, source=NAMEPLATE, key="contacts", part="lug")
+OTHER = upper(
+    "rectifier-volts", value=51.0, limit=75.0, kind=VOLTAGE, source=NAMEPLATE, key="rectifier-volts"
+)
+NEAR = upper("contacts", value=9.4, limit=10.0, kind=CURRENT, source=PRACTICE, key="contacts", part="lug")
+OVER = upper(
+    "rectifier-rating", value=448.0, limit=400.0, kind=CURRENT, source=NAMEPLATE, key="rectifier-rating"
+)
+NOTE = note("places", "places.counted", PRACTICE, "places.hang")
+BASE = Finding(
+    "recipe-base",
+    Level.CAUTION,
+    "recipe-base",
+    PRACTICE,
+    facts={"part": "lug", "base": "6061", "bases": "2xxx"},
+)
+
+
+def test_the_setpoint_line_says_what_to_set_first(sketch: Plan) -> None:
+    assert setpoint_lines(sketch, METRIC) == [
+        "SET  148 A   ramp 5 min   41.5 min   stop at 96.1 Ah   rectifier R3   work +",
+        "     2.58 A/dm2 on 61.7 dm2   expect 24.0 to 51.0 V   position: default",
+    ]
+
+
+def test_the_us_line_holds_the_same_plan(sketch: Plan) -> None:
+    assert setpoint_lines(sketch, Style("us", ascii=True))[1] == (
+        "     24 A/ft2 on 6.64 ft2   expect 24.0 to 51.0 V   position: default"
+    )
+
+
+def test_hard_chrome_is_set_by_its_plating_time_and_told_what_comes_first(demo: Demo) -> None:
+    lines = setpoint_lines(demo("rod-40x900"), METRIC)
+    assert lines[0].startswith("SET  ")
+    assert "h:min" in lines[0]
+    assert "work -" in lines[0]
+    assert lines[1].startswith("     first   soak ")
+    assert "reverse 60 s at " in lines[1]
+    assert " A work +" in lines[1]
+
+
+def test_a_run_by_voltage_sets_volts_and_expects_amperes(demo: Demo) -> None:
+    lines = setpoint_lines(demo("brackets-chromic-24"), METRIC)
+    assert lines[0].startswith("SET  40.0 V   ramp 8 min   ")
+    assert "   about " in lines[0]
+    assert "expect up to " in lines[1]
+
+
+def test_a_voltage_limit_on_the_way_is_part_of_the_setpoint(sketch: Plan) -> None:
+    assert sketch.run is not None
+    held = replace(sketch, run=replace(sketch.run, limit_reached=1800.0, voltage_limit=75.0))
+    assert "held at 75.0 V from 30 min" in " ".join(setpoint_lines(held, METRIC))
+
+
+def test_a_stopped_plan_has_nothing_to_set(sketch: Plan) -> None:
+    made = replace(sketch, findings=(OVER,), binding=OVER)
+    assert setpoint_lines(made, METRIC) == ["SET  nothing to set: a stop forbids this plan, rectifier R3"]
+
+
+# --- verdict ---------------------------------------------------------------------------------------------
+
+
+def test_checks_met_names_what_is_tightest_and_what_comes_next(sketch: Plan) -> None:
+    assert verdict_line(sketch, METRIC) == (
+        "CHECKS MET  tightest: contacts 71 % of their limit, then rectifier volts 68 %"
+    )
+
+
+def test_notes_are_counted_in_the_verdict(sketch: Plan) -> None:
+    made = replace(sketch, findings=(OK, OTHER, NOTE))
+    assert verdict_line(made, METRIC).endswith("rectifier volts 68 %; 1 note")
+
+
+def test_a_caution_names_the_gravest_and_counts_the_others(sketch: Plan) -> None:
+    made = replace(sketch, findings=(NEAR, BASE, OK, NOTE, NOTE), binding=NEAR)
+    assert verdict_line(made, METRIC) == "CAUTION  contacts 94 % of their limit; 1 more caution; 2 notes"
+
+
+def test_a_caution_that_compares_nothing_is_said_in_words(sketch: Plan) -> None:
+    made = replace(sketch, findings=(BASE, OK), binding=OK)
+    assert verdict_line(made, METRIC) == "CAUTION  lug is of 6061; the recipe is for 2xxx"
+
+
+def test_a_stop_is_said_with_its_share_and_the_cautions_behind_it(sketch: Plan) -> None:
+    made = replace(sketch, findings=(OVER, NEAR, OK), binding=OVER)
+    assert verdict_line(made, METRIC) == "STOP  rectifier rating 112 % of its limit; 1 caution"
+
+
+def test_a_plan_without_any_comparison_says_so(sketch: Plan) -> None:
+    made = replace(sketch, findings=(NOTE,), binding=None)
+    assert verdict_line(made, METRIC) == "CHECKS MET  nothing to compare; 1 note"
+
+
+def test_a_verdict_that_is_too_long_ends_at_a_word(sketch: Plan) -> None:
+    line = verdict_line(sketch, METRIC, width=50)
+    assert line == "CHECKS MET  tightest: contacts 71 % of their ..."
+    assert len(line) <= 50
+
+
+# --- caution ---------------------------------------------------------------------------------------------
+
+
+def test_the_gravest_caution_stands_on_one_line_with_the_number_of_others(each_load: Plan) -> None:
+    line = caution_line(each_load, METRIC)
+    words = [c.word for c in each_load.cautions]
+    assert line.startswith("DANGER " if "DANGER" in words else f"{words[0]} ")
+    assert line.endswith(f"+ {len(words) - 1} more")
+    assert len(line) <= 76
+
+
+def test_a_notice_never_takes_the_line_from_a_graver_word(each_load: Plan) -> None:
+    for moment in ("before loading", "before current", "while current flows", "unloading", "after"):
+        here = [c.word for c in each_load.cautions if moment in c.moments]
+        line = caution_line(each_load, METRIC, moment)  # type: ignore[arg-type]
+        assert line.startswith("NOTICE") == (bool(here) and set(here) == {"NOTICE"})
+
+
+def test_without_a_caution_the_line_is_empty(sketch: Plan) -> None:
+    assert caution_line(replace(sketch, cautions=()), METRIC) == ""
