@@ -38,7 +38,7 @@ def test_the_id_decides_between_equal_ranks(chrome: tuple[Caution, ...]) -> None
 
 def test_what_kills_at_once_comes_before_what_kills_slowly(texts: CautionTexts) -> None:
     dangers = [one.id for one in everything(texts) if one.word == "DANGER"]
-    # our own judgement: entry, shock and gas kill in seconds, HF in hours; then the bath itself, then the rest of the line
+    # our own judgement: entry, shock and gas kill in seconds, HF in hours; then the bath, then the rest of the line
     for quick, slow in [
         ("tank-entry", "acid-burn"),
         ("dc-60", "acid-burn"),
