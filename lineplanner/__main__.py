@@ -1,11 +1,13 @@
 """The door: answers --version at once, hands everything else to the shells."""
 
+import gc
 import os
 import sys
 
 from lineplanner import __version__
 
 INTERRUPTED = 130
+NEW_OBJECTS = 200_000  # more than a plan makes: a command ends before the collector would find anything
 
 
 def main(arguments: list[str] | None = None) -> int:
@@ -27,9 +29,12 @@ def _run(arguments: list[str]) -> int:
     if arguments == ["--version"]:
         sys.stdout.write(f"lineplanner {__version__}\n")
         return 0
+    gc.set_threshold(NEW_OBJECTS)
     from lineplanner import cli
 
-    return cli.main(arguments)
+    code = cli.main(arguments)
+    gc.freeze()  # files are closed by now: nothing is left that the interpreter must look through on its way out
+    return code
 
 
 if __name__ == "__main__":

@@ -56,3 +56,10 @@ def test_a_reader_that_goes_away_ends_the_program_quietly() -> None:
         assert process.stderr is not None
         assert process.stderr.read() == ""
     assert process.returncode == 0
+
+
+def test_handlers_of_the_exit_still_run_and_nothing_that_was_printed_is_lost() -> None:
+    body = "import atexit; atexit.register(print, 'left'); print('x' * 1_000_000); return 2"
+    with door(body) as process:
+        assert process.communicate() == ("x" * 1_000_000 + "\nleft\n", "")
+    assert process.returncode == 2

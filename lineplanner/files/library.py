@@ -68,8 +68,7 @@ class Library:
             if not _STEM.fullmatch(path.stem):
                 found.append(FileProblem(path, None, (), "file.stem", {"stem": path.stem}))
             if path != first[path.stem]:
-                facts = {"stem": path.stem, "other": shown_path(first[path.stem])}
-                found.append(FileProblem(path, None, (), "file.two_of_one_name", facts))
+                found.append(_of_one_name(path, first[path.stem]))
         return found
 
     # --- reading -----------------------------------------------------------------------------------------
@@ -91,16 +90,12 @@ class Library:
 
     def entry(self, kind: str, name: str, place: Place | None = None) -> Entry:
         """The file of a kind with a name. place words the problem of a name that no file has."""
-        stems = self.stems(kind)
-        path = stems.get(name)
-        if path is None:
+        named = [path for path in self.paths(kind) if path.stem == name]
+        if not named:
             raise FilesError([self.unknown(kind, name, place)])
-        shared = [
-            one for one in self.listing_problems(kind) if one.key == "file.two_of_one_name" and one.path
-        ]
-        if any(one.facts["stem"] == name for one in shared):
-            raise FilesError([one for one in shared if one.facts["stem"] == name])
-        return self.open(path, kind)
+        if len(named) > 1:
+            raise FilesError([_of_one_name(path, named[0]) for path in named[1:]])
+        return self.open(named[0], kind)
 
     def record(self, kind: str, name: str) -> Any:
         """The record of a kind with a name. Raises FilesError."""
@@ -194,6 +189,11 @@ def _entry_or_error(path: DiskPath, kind: str | None) -> Entry | FilesError:
         return read_entry(path, kind)
     except FilesError as error:
         return error
+
+
+def _of_one_name(path: DiskPath, first: DiskPath) -> FileProblem:
+    facts = {"stem": path.stem, "other": shown_path(first)}
+    return FileProblem(path, None, (), "file.two_of_one_name", facts)
 
 
 def _toml_files(folder: DiskPath) -> list[DiskPath]:

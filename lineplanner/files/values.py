@@ -66,12 +66,12 @@ def _number(field: Field, value: Any) -> float:
         raise _no("value.no_unit", token=typed(value), kind=kind.name, example=example(kind))
     elif isinstance(value, str):
         try:
-            number = _ordinary(parse(value, kind), typed(value))
+            number = _ordinary(parse(value, kind), value)
         except UnitTextError as error:
             raise PydanticCustomError(error.key, error.key, dict(error.facts)) from error
     else:
         raise _no("value.not_text", token=typed(value), kind=kind.name, example=example(kind))
-    _bounded(field, number, typed(value))
+    _bounded(field, number, value)
     return number
 
 
@@ -80,22 +80,22 @@ def _finite(value: float) -> float:
         number = float(value)
     except OverflowError:
         number = math.inf
-    return _ordinary(number, typed(value))
+    return _ordinary(number, value)
 
 
 _LEAST, _MOST = 1e-30, 1e15  # in SI: nothing in a shop is beyond, and what is computed from it stays finite
 
 
-def _ordinary(number: float, text: str) -> float:
+def _ordinary(number: float, value: object) -> float:
     if number != 0.0 and not _LEAST <= abs(number) <= _MOST:
-        raise _no("value.not_finite", token=text)
+        raise _no("value.not_finite", token=typed(value))
     return number
 
 
 _NOISE = 1e-12  # relative; what the conversion of a unit may add to a number that was typed as the limit
 
 
-def _bounded(field: Field, number: float, text: str) -> None:
+def _bounded(field: Field, number: float, value: object) -> None:
     bounds = (
         ("value.low", field.low, number < (field.low or 0.0) - abs(field.low or 0.0) * _NOISE),
         ("value.above", field.above, number <= (field.above or 0.0)),
@@ -104,6 +104,7 @@ def _bounded(field: Field, number: float, text: str) -> None:
     )
     for key, limit, passed in bounds:
         if limit is not None and passed:
+            text = typed(value)
             raise _no(key, token=text, limit=_in_its_unit(limit, field.kind or RATIO, text))
 
 
@@ -116,8 +117,8 @@ def _in_its_unit(limit: float, kind: Kind, text: str) -> str:
 def _count(field: Field, value: Any) -> int:
     if isinstance(value, bool) or not isinstance(value, int):
         raise _no("value.not_count", token=typed(value))
-    _ordinary(min(abs(value), 10**16), typed(value))
-    _bounded(field, value, typed(value))
+    _ordinary(min(abs(value), 10**16), value)
+    _bounded(field, value, value)
     return value
 
 

@@ -1,46 +1,56 @@
 """The identity of a plan: a hash of everything it was made from, and of the program's version."""
 
 import hashlib
-from collections.abc import Iterator, Mapping
+from collections.abc import Mapping
 from dataclasses import fields, is_dataclass
 from enum import Enum
+from functools import cache
+from typing import Any
 
 from lineplanner import __version__
 from lineplanner.plan import Plan
 
 LENGTH = 12  # hexadecimal digits: no two plans of a shop share them by chance
+_BY_REPR = frozenset({str, float, bool, type(None)})
 
 
 def plan_id(plan: Plan) -> str:
     """The hash of a plan's inputs: the case as run, the recipe as filed, default or map, the version."""
-    digest = hashlib.sha256()
-    for piece in _canonical((__version__, plan.case, plan.filed, plan.position)):
-        digest.update(piece.encode("utf-8"))
-    return digest.hexdigest()[:LENGTH]
+    pieces: list[str] = []
+    _write((__version__, plan.case, plan.filed, plan.position), pieces)
+    return hashlib.sha256("".join(pieces).encode("utf-8")).hexdigest()[:LENGTH]
 
 
-def _canonical(value: object) -> Iterator[str]:
+def _write(value: Any, pieces: list[str]) -> None:
     """A value as one text whatever the order of its keys: type, then what it holds, each with its end."""
-    if isinstance(value, Mapping):
-        yield "{"
+    if type(value) in _BY_REPR:
+        pieces.append(f"{value!r};")
+    elif isinstance(value, Mapping):
+        pieces.append("{")
         for key in sorted(value, key=str):
-            yield from _canonical(key)
-            yield from _canonical(value[key])
-        yield "}"
+            _write(key, pieces)
+            _write(value[key], pieces)
+        pieces.append("}")
     elif isinstance(value, tuple | list):
-        yield "["
+        pieces.append("[")
         for one in value:
-            yield from _canonical(one)
-        yield "]"
+            _write(one, pieces)
+        pieces.append("]")
     elif is_dataclass(value) and not isinstance(value, type):
-        yield f"{type(value).__name__}("
-        for one in sorted(fields(value), key=lambda field: field.name):
-            yield from _canonical(one.name)
-            yield from _canonical(getattr(value, one.name))
-        yield ")"
+        pieces.append(f"{type(value).__name__}(")
+        for name in _names(type(value)):
+            pieces.append(f"{name!r};")
+            _write(getattr(value, name), pieces)
+        pieces.append(")")
     elif isinstance(value, Enum):
-        yield f"{value.value!r};"
-    elif isinstance(value, int | float) and not isinstance(value, bool):
-        yield f"{float(value)!r};"
+        pieces.append(f"{value.value!r};")
+    elif isinstance(value, int | float):
+        pieces.append(f"{float(value)!r};")
     else:
-        yield f"{value!r};"
+        pieces.append(f"{value!r};")
+
+
+@cache
+def _names(record: type) -> tuple[str, ...]:
+    """The fields of a record in the order of the alphabet."""
+    return tuple(sorted(field.name for field in fields(record)))

@@ -1,7 +1,8 @@
 """Units at the edge: text with a unit -> SI float, SI float -> text; the trade's unit words.
 
-grammar splits, diagnosis says what is wrong, registry converts (it alone loads pint, at first use), reading
-joins the three; trade holds the trade's units, display prints in them.
+grammar splits, diagnosis says what is wrong, registry converts (it alone loads pint, at first use), table
+holds the usual conversions worked out by it, reading joins the four; trade holds the trade's units, display
+prints in them.
 """
 
 from lineplanner.units.display import echo, show, to_unit

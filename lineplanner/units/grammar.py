@@ -4,7 +4,7 @@ import re
 from dataclasses import dataclass
 from difflib import get_close_matches
 from functools import cache
-from importlib.resources import files
+from pathlib import Path
 from typing import NamedTuple, NoReturn
 
 LONGEST = 60  # characters of a text with a unit; honest ones have half of that
@@ -81,9 +81,7 @@ class Unit:
 @cache
 def definition_lines() -> tuple[str, ...]:
     """The lines of the definitions file that lies beside this module."""
-    return tuple(
-        files("lineplanner.units").joinpath("definitions.txt").read_text(encoding="utf-8").splitlines()
-    )
+    return tuple(Path(__file__).with_name("definitions.txt").read_text(encoding="utf-8").splitlines())
 
 
 @cache

@@ -9,10 +9,11 @@ from lineplanner.units.errors import UnitTextError, shown
 from lineplanner.units.grammar import LONGEST, SPLIT, Refusal, Unit, clean, read_unit
 from lineplanner.units.messages import GIVE, GIVE_UNIT
 from lineplanner.units.registry import Conversion, conversion
+from lineplanner.units.table import conversions
 from lineplanner.units.trade import System, example
 
 _MOST_KNOWN = 1000
-_known: dict[tuple[str, str], Conversion] = {}  # by unit text as typed, and name of the kind
+_known: dict[tuple[str, str], Conversion] = conversions()  # by unit text as typed, and name of the kind
 
 
 def parse(text: str, kind: Kind, *, system: System | None = None) -> float:
@@ -27,8 +28,9 @@ def parse(text: str, kind: Kind, *, system: System | None = None) -> float:
     match = SPLIT.fullmatch(text) if len(text) <= LONGEST else None
     if match:
         known = _known.get((match[2], kind.name))
-        if known:
-            value = float(match[1]) * known.factor + known.offset
+        number = float(match[1])
+        if known and number:
+            value = number * known.factor + known.offset
             if value and known.low <= value < inf and -inf < value:
                 return value
     try:
@@ -50,9 +52,13 @@ def unit_conversion(text: str, kind: Kind) -> Conversion:
 
 
 def _remember(text: str, kind: Kind, unit: Unit) -> Conversion:
+    known = _known.get((text, kind.name))
+    if known is not None:
+        return known
     found = conversion(unit, kind)
     if len(_known) >= _MOST_KNOWN:
         _known.clear()
+        _known.update(conversions())
     if kind != COUNT:  # a count is looked at each time: it must be whole
         _known[text, kind.name] = found
     return found

@@ -31,7 +31,7 @@ class Conversion(NamedTuple):
 
 @cache
 def registry() -> "pint.UnitRegistry[Any]":
-    """The registry of our own definitions; importing pint costs most of the start-up, so it comes late."""
+    """The registry of our own definitions; importing pint is slow, so it comes late."""
     import pint
 
     units: pint.UnitRegistry[Any] = pint.UnitRegistry(None)
