@@ -1,5 +1,6 @@
 """What a check found: level, demand, limit, margin, source and the way out."""
 
+import math
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from enum import StrEnum
@@ -8,6 +9,7 @@ from lineplanner.errors import Fact
 from lineplanner.quantities import Kind
 from lineplanner.sources import Source
 
+_DUST = 1e-12  # what float arithmetic leaves at an exact share
 CAUTION_AT = 0.9  # share of a limit from which a check is a caution (design rule of this program)
 
 
@@ -47,9 +49,12 @@ def level_of(
     margin: float, *, source: Source, demand_firm: bool = True, caution_at: float = CAUTION_AT
 ) -> Level:
     """The level of a margin: a stop only where the limit may decide it alone and the demand is no mere estimate."""
+    if not math.isfinite(margin):
+        raise ValueError("a margin is a number")
     if margin < 0.0:
         return Level.STOP if source.status.may_stop and demand_firm else Level.CAUTION
-    return Level.CAUTION if margin < 1.0 - caution_at else Level.OK
+    near = margin <= 1.0 - caution_at + _DUST and caution_at < 1.0
+    return Level.CAUTION if near else Level.OK
 
 
 def upper(

@@ -8,6 +8,7 @@ from lineplanner.bath.uncertainty import Band
 from lineplanner.capacity import (
     Proposal,
     binding,
+    can_bind,
     check_bus,
     check_contacts,
     check_cooling,
@@ -167,13 +168,14 @@ def thicknesses(runner: Runner, run: Run | None, shares: PositionShares | None) 
 
 
 def ranked_findings(findings: list[Finding]) -> tuple[Finding, ...]:
-    """Gravest first, then tightest; those without a comparison last within their level."""
-    return tuple(
-        sorted(
-            findings,
-            key=lambda f: (-f.level.rank, f.margin is None, f.margin if f.margin is not None else 0.0),
-        )
-    )
+    """Gravest first; what is wrong by kind (alloy, mixture, level) before what is over by a percentage."""
+    return tuple(sorted(findings, key=_rank))
+
+
+def _rank(finding: Finding) -> tuple[int, bool, float]:
+    grave = finding.level in (Level.STOP, Level.CAUTION)
+    late = (finding.margin is not None) if grave else (finding.margin is None or not can_bind(finding))
+    return (-finding.level.rank, late, finding.margin if finding.margin is not None else 0.0)
 
 
 def _run_findings(
@@ -196,6 +198,7 @@ def _run_findings(
             high=thickness.high,
             band=thickness.band,
             solve=lambda wanted: runner.time_for(run, wanted),
+            limited=run.limit_reached is not None,
             clock=runner.clock,
         )
     found += check_contacts(job.areas, run, job.process, case)
@@ -204,8 +207,8 @@ def _run_findings(
     found += check_joints(run, case)
     found += check_titanium_volts(run, case)
     if emissions is not None:
-        found += check_cooling(emissions.heat_peak, case)
-        found += check_hydrogen(emissions.hydrogen, case)
+        found += check_cooling(emissions.to_cool, case)
+        found += check_hydrogen(emissions.hydrogen, run, case)
     return found
 
 
@@ -262,11 +265,13 @@ def _figures(
 def _nothing_wet(
     case: Case, filed: Recipe, changed: tuple[Deviation, ...], areas: LoadAreas, circuit: Circuit
 ) -> Plan:
-    """A load with nothing in the solution: there is no number to set."""
+    """A load on which no part carries current: there is no number to set."""
     source = Source("areas of the load", Status.DERIVED)
-    finding = Finding("level", Level.STOP, "level.nothing-wet", source, fix="level.raise")
-    process = process_of(case)
-    aims = job_of(case, process, areas, 0.0).aims
+    dry = all(item.dry == item.count for item in areas.items)
+    key, fix = ("level.nothing-wet", "level.raise") if dry else ("level.masked", "level.unmask")
+    finding = Finding("level", Level.STOP, key, source, fix=fix)
+    job = job_of(case, process_of(case), areas, circuit.resistance)
+    findings = ranked_findings([finding, *check_deviations(changed), *check_load(job)])
     return Plan(
         case=case,
         filed=filed,
@@ -275,7 +280,7 @@ def _nothing_wet(
         deviations=changed,
         areas=areas,
         circuit=circuit,
-        aims=aims,
+        aims=job.aims,
         control="voltage" if case.recipe.voltages else "current",
         run=None,
         others=(),
@@ -283,7 +288,7 @@ def _nothing_wet(
         emissions=None,
         outcome=None,
         start=None,
-        findings=(finding,),
+        findings=findings,
         binding=finding,
         cautions=_cautions(case, areas, None, None),
         figures=area_figures(case, areas),

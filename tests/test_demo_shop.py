@@ -114,8 +114,8 @@ def test_every_process_of_the_line_has_a_load_and_drafts_stand_beside_approved_r
 
 def test_the_two_chrome_rectifiers_differ_in_reversing_gear_and_one_may_be_overloaded_for_a_strike() -> None:
     feeding = [one for one in records("line")["kestrel-yard"].rectifiers if "C1" in one.tanks]
-    assert sorted(one.reversing for one in feeding) == [False, True]
-    assert any(one.reversing and one.overload_current for one in feeding)
+    assert sorted(one.reversing for one in feeding) == ["no", "yes"]
+    assert any(one.reversing == "yes" and one.overload_current for one in feeding)
 
 
 def test_the_first_load_is_a_load_of_the_shop() -> None:

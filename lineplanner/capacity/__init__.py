@@ -1,6 +1,6 @@
 """Program and line give findings: it compares, it never derives again."""
 
-from lineplanner.capacity.binding import binding
+from lineplanner.capacity.binding import binding, can_bind
 from lineplanner.capacity.bus import check_bus, check_joints
 from lineplanner.capacity.contacts import check_contacts
 from lineplanner.capacity.propose import Proposal, propose
@@ -11,6 +11,7 @@ from lineplanner.capacity.services import check_cooling, check_hydrogen, check_t
 __all__ = [
     "Proposal",
     "binding",
+    "can_bind",
     "check_bus",
     "check_contacts",
     "check_cooling",

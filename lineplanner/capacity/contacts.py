@@ -4,7 +4,7 @@ import math
 from collections.abc import Iterator
 from dataclasses import replace
 
-from lineplanner.capacity.demand import peak_current
+from lineplanner.capacity.demand import firm_current, fitting_density, peak_current
 from lineplanner.circuit.contacts import contacts_needed
 from lineplanner.errors import Fact, Quantity
 from lineplanner.findings import Finding, Level, lower, note, upper
@@ -21,10 +21,12 @@ def check_contacts(areas: LoadAreas, run: Run, process: ProcessDefaults, case: C
     if areas.carrying <= 0.0:
         return ()
     density = peak_current(run) / areas.carrying
-    return tuple(f for item in areas.items for f in _item(item, density, process, case))
+    return tuple(f for item in areas.items for f in _item(item, run, density, process, case))
 
 
-def _item(item: Item, density: CurrentDensity, process: ProcessDefaults, case: Case) -> Iterator[Finding]:
+def _item(
+    item: Item, run: Run, density: CurrentDensity, process: ProcessDefaults, case: Case
+) -> Iterator[Finding]:
     if item.carrying <= 0.0:
         return
     if item.contacts is None or item.contact_current is None:
@@ -42,8 +44,9 @@ def _item(item: Item, density: CurrentDensity, process: ProcessDefaults, case: C
         "demand": Quantity(demand, CURRENT),
         "allowed": Quantity(limit, CURRENT),
     }
-    if demand > 0.0:
-        facts["density"] = Quantity(density * limit / demand, CURRENT_DENSITY)
+    fitting = fitting_density(run, peak_current(run) * limit / demand) if demand > 0.0 else None
+    if fitting is not None:
+        facts["density"] = Quantity(fitting, CURRENT_DENSITY)
     finding = upper(
         "contacts",
         value=demand,
@@ -52,6 +55,7 @@ def _item(item: Item, density: CurrentDensity, process: ProcessDefaults, case: C
         source=_origin(item, case),
         key="contacts",
         fix="contacts.more" if demand > limit else "contacts.near",
+        demand_firm=firm_current(run),
     )
     yield replace(finding, facts=facts)
     number = lower(

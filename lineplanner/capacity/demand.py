@@ -166,25 +166,33 @@ def stage_volts(stage: Stage) -> Voltage:
 
 
 def fitting_density(run: Run, allowed: Current) -> CurrentDensity | None:
-    """Current density at which a load's current just fits.
+    """Current density to set so that the peak of the program just fits.
 
-        J_fit = I_allowed / A, A = I / J of any stage
+        J_fit = J_set I_allowed / I_peak
 
     Parameters
         run: the program on its rectifier
         allowed: I_allowed, of the whole load [A]
     Returns
-        J_fit; None without a stage that says its current density [A/m^2]
+        J_fit; None where density is no setting, or the peak does not follow it (a reverse etch) [A/m^2]
     Valid
-        same parts and racks, so the same carrying area
+        same parts and racks; strike and soft start go with the set current
     Source
         current is current density times carrying area
     Example
         >>> from types import SimpleNamespace as Record
-        >>> plate = Record(density=150.0, to_current=1200.0)
-        >>> fitting_density(Record(stages=(plate,)), 1000.0)
+        >>> plate = Record(stage="plate", density=150.0, to_current=1200.0, peak=1200.0)
+        >>> fitting_density(Record(stages=(plate,), panel_current=1200.0), 1000.0)
         125.0
     """
-    ends = (s for s in run.stages if s.to_current > 0.0 and s.density > 0.0)
-    stage = next(ends, None)
-    return None if stage is None else stage.density * allowed / stage.to_current
+    stage = peak_stage(run)
+    if run.panel_current is None or stage is None or stage.stage == "reverse" or stage.peak <= 0.0:
+        return None
+    last = run.stages[-1]
+    set_density = last.density * run.panel_current / last.to_current
+    return set_density * allowed / stage.peak
+
+
+def firm_current(run: Run) -> bool:
+    """Whether the current is set by hand; under voltage control it is only planned from a usual peak."""
+    return run.set_current is not None

@@ -37,6 +37,11 @@ def _size(run: Run) -> tuple[float, float]:
     return (math.inf, math.inf) if rectifier is None else (rectifier.max_current, rectifier.max_voltage)
 
 
+def _worst_first(findings: Iterable[Finding]) -> tuple[float, ...]:
+    """Margins below zero, worst first, then a mark that ends the list: fewer failures compare as better."""
+    return (*sorted(m for m in map(_margin, findings) if m < 0.0), math.inf)
+
+
 def propose(checked: Iterable[tuple[Run, tuple[Finding, ...]]], *, named: str = "") -> Proposal:
     """The smallest rectifier that passes every check, else the one whose worst check is best.
 
@@ -53,7 +58,7 @@ def propose(checked: Iterable[tuple[Run, tuple[Finding, ...]]], *, named: str = 
     elif passing:
         chosen = min(passing, key=lambda pair: _size(pair[0]))
     else:
-        chosen = max(tried, key=lambda pair: (min(map(_margin, pair[1])), -_size(pair[0])[0]))
+        chosen = max(tried, key=lambda pair: (_worst_first(pair[1]), -_size(pair[0])[0]))
     others = tuple(
         (run.rectifier.name, next(iter(failures(findings)), None))
         for run, findings in tried

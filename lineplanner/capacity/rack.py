@@ -4,7 +4,7 @@ from collections.abc import Iterator
 from dataclasses import dataclass, replace
 from typing import Literal
 
-from lineplanner.capacity.demand import peak_current, steady_current
+from lineplanner.capacity.demand import firm_current, peak_current, steady_current
 from lineplanner.circuit.conductors import (
     bar_perimeter,
     bar_rise,
@@ -71,6 +71,7 @@ def _rating(run: Run, case: Case, entered: Source) -> Iterator[Finding]:
         source=entered,
         key="rack-rating",
         fix="rack-rating.fewer",
+        demand_firm=firm_current(run),
         rack=case.rack.name,
         demand=Quantity(demand, CURRENT),
         allowed=Quantity(rated, CURRENT),

@@ -5,6 +5,7 @@ from collections.abc import Iterator, Mapping
 from dataclasses import replace
 
 from lineplanner.capacity.demand import (
+    firm_current,
     fitting_density,
     peak_current,
     peak_stage,
@@ -126,6 +127,7 @@ def _rating(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]:
         source=source,
         key=key,
         fix=_way(value, limit, facts, "rectifier-rating"),
+        demand_firm=firm_current(run),
     )
     yield replace(finding, facts=facts)
 
@@ -169,13 +171,14 @@ def _continuous(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]
     limits = case.tables.limits
     if not run.stages:
         return
-    value = sustained_current(run.stages, limits.overload_time.value)
+    short = rectifier.overload_time if rectifier.overload_time is not None else limits.overload_time.value
+    value = sustained_current(run.stages, short)
     limit = limits.continuous_share.value * _available(rectifier, case)
     facts = _ways_out(run, case, value, limit)
     facts |= {
         "rectifier": rectifier.name,
         "share": Quantity(limits.continuous_share.value, RATIO),
-        "seconds": Quantity(limits.overload_time.value, TIME),
+        "seconds": Quantity(short, TIME),
     }
     finding = upper(
         "rectifier-continuous",
@@ -185,6 +188,7 @@ def _continuous(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]
         source=limits.continuous_share.origin,
         key="rectifier-continuous",
         fix=_way(value, limit, facts, "rectifier-continuous"),
+        demand_firm=firm_current(run),
         caution_at=1.0,  # the share is itself the mark at which to take care, below the rating
     )
     yield replace(finding, facts=facts)
@@ -239,13 +243,15 @@ def _metered(rectifier: Rectifier, case: Case) -> tuple[Current, Source]:
 
 
 def _volts(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]:
-    """Terminal volts against the limit set on the panel, or the rating. Only a setting is a firm demand."""
-    if not run.stages:
+    """Terminal volts against the limit set on the panel, or the rating. Only a setting is a firm demand.
+
+    A run that is held at the limit on its way says so by its own check.
+    """
+    if not run.stages or run.limit_reached is not None:
         return
-    plate = rectifier.max_voltage
-    limit = plate if rectifier.voltage_limit is None else min(plate, rectifier.voltage_limit)
+    plate, limit = rectifier.max_voltage, rectifier.most_voltage
     stage = max(run.stages, key=lambda s: (stage_volts(s), s.control == "voltage"))
-    set_by_hand = stage.control == "voltage"
+    set_by_hand = stage.control == "voltage"  # held at the limit on the way is left out above
     yield upper(
         "rectifier-volts",
         value=stage_volts(stage),
@@ -270,9 +276,19 @@ def _reversing(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]:
     if case.recipe.reverse_tank:
         yield note("reversing", "reversing.elsewhere", nameplate(rectifier), tank=case.recipe.reverse_tank)
         return
-    if rectifier.reversing or not any(s.stage == "reverse" for s in run.stages):
+    if rectifier.reversing == "yes" or not any(s.stage == "reverse" for s in run.stages):
         return
     facts: dict[str, Fact] = {"rectifier": rectifier.name}
+    if rectifier.reversing == "unknown":
+        yield Finding(
+            "reversing",
+            Level.CAUTION,
+            "reversing.unknown",
+            nameplate(rectifier),
+            fix="reversing.enter",
+            facts=facts,
+        )
+        return
     yield Finding(
         "reversing",
         Level.STOP,

@@ -4,7 +4,7 @@ from collections.abc import Iterator
 from dataclasses import replace
 
 from lineplanner.bath.gas import hydrogen_share
-from lineplanner.capacity.demand import stage_volts
+from lineplanner.capacity.demand import firm_current, stage_volts
 from lineplanner.capacity.tiers import between_marks
 from lineplanner.errors import Fact, Quantity
 from lineplanner.findings import Finding, Level, note, upper
@@ -45,7 +45,7 @@ def check_cooling(heat_peak: Power, case: Case) -> tuple[Finding, ...]:
     return (replace(finding, facts=facts),)
 
 
-def check_hydrogen(hydrogen: Flow, case: Case) -> tuple[Finding, ...]:
+def check_hydrogen(hydrogen: Flow, run: Run, case: Case) -> tuple[Finding, ...]:
     """Hydrogen in the exhaust at the peak stage. A flow that is not proven does not count yet."""
     exhaust = case.tank.exhaust
     facts: dict[str, Fact] = {"hydrogen": Quantity(hydrogen, FLOW), "tank": case.tank.name}
@@ -63,7 +63,7 @@ def check_hydrogen(hydrogen: Flow, case: Case) -> tuple[Finding, ...]:
         fail=limits.hydrogen_limit,
         kind=RATIO,
         facts=facts,
-        demand_firm=True,
+        demand_firm=firm_current(run),
     )
     if exhaust.proven:
         return (finding,)
@@ -87,7 +87,7 @@ def check_titanium_volts(run: Run, case: Case) -> tuple[Finding, ...]:
             source=limit.origin,
             key="titanium-volts",
             fix="titanium-volts.aluminium",
-            demand_firm=stage.control == "voltage",
+            demand_firm=stage.control == "voltage" and run.limit_reached is None,
             where=where,
         ),
     )

@@ -16,7 +16,9 @@ from lineplanner.load import LoadAreas
 from lineplanner.program.stages import Run
 from lineplanner.quantities import Concentration, Current, Flow, Ratio, Stress, Temperature
 
-_HOT = frozenset({"hot-water-seal", "dichromate-seal", "nickel-seal", "oven"})  # contents that are run hot
+_HOT = frozenset(
+    {"hot-water-seal", "dichromate-seal", "nickel-acetate-seal", "nickel-seal", "oven"}
+)  # contents that are run hot
 _WATER = 1000.0  # kg/m^3; for the mass share of dilute boric acid
 
 # What a recipe's side step means to the caution rules.
@@ -30,6 +32,7 @@ _STEPS: dict[str, StepKind] = {
     "hydrochloric-strip": "hydrochloric-strip",
     "hot-water-seal": "hot-water-seal",
     "dichromate-seal": "dichromate-seal",
+    "nickel-acetate-seal": "nickel-acetate-seal",
     "nickel-seal": "nickel-seal",
     "dye": "dye",
     "grind": "grind",
@@ -66,9 +69,10 @@ def situation_of(case: Case, areas: LoadAreas, run: Run | None, gas: Gas) -> Sit
         part_traps_gas=_gas_trapped(case),
         lead=tank.counter_electrode == "lead",
         installed_chrome_current=_installed_chrome(case),
+        permit_by_charge=False,  # no record says that a permit counts ampere-hours
         region_eu=case.site.region == "eu",
         **_bath(case.bath),
-        **_supply(run),
+        **_supply(case, run),
         **_air(case),
         **_steel(areas, recipe),
     )
@@ -91,19 +95,25 @@ def _bath(bath: Bath) -> dict[str, Any]:
     }
 
 
-def _supply(run: Run | None) -> dict[str, Any]:
-    """What the rectifier gives and can give."""
-    if run is None or run.rectifier is None:
+def _supply(case: Case, run: Run | None) -> dict[str, Any]:
+    """What the rectifier gives and can give; without a run the strongest that can feed the tank."""
+    feeding = [r for r in case.line.rectifiers if case.tank.name in r.tanks]
+    rectifier = run.rectifier if run is not None else max(feeding, key=lambda r: r.most_voltage, default=None)
+    if rectifier is None:
         return {}
-    rectifier = run.rectifier
-    return {
-        "planned_peak_current": run.peak_current,
-        "planned_peak_voltage": run.peak_voltage,
-        "voltage_limit": rectifier.voltage_limit,
+    unit = {
+        "planned_peak_current": rectifier.max_current,
+        "voltage_limit": None if rectifier.voltage_limit is None else rectifier.most_voltage,
         "rated_voltage": rectifier.max_voltage,
         "full_on_voltage": rectifier.full_on_voltage,
         "phase_controlled_unfiltered": _unfiltered(rectifier),
         "rated_current": rectifier.max_current,
+    }
+    if run is None:
+        return unit
+    return unit | {
+        "planned_peak_current": run.peak_current,
+        "planned_peak_voltage": run.peak_voltage,
         "reverse_stage": any(s.stage == "reverse" for s in run.stages),
         "load_charge": run.counter,
     }
@@ -188,9 +198,12 @@ def _unfiltered(rectifier: Rectifier) -> bool:
 
 
 def _exhaust_sum(case: Case) -> Flow | None:
-    flows = [t.exhaust.flow for t in case.line.tanks if t.exhaust is not None]
-    known = [f for f in flows if f is not None]
-    return sum(known) if known and len(known) == len(case.line.tanks) else None
+    """All exhausts of the line; with some not known what is known, if that alone is more than the supply."""
+    flows = [t.exhaust.flow if t.exhaust is not None else None for t in case.line.tanks]
+    known = sum(f for f in flows if f is not None)
+    exhaust = case.tank.exhaust
+    supply = None if exhaust is None else exhaust.supply
+    return known if None not in flows or (supply is not None and known > supply) else None
 
 
 def _gas_trapped(case: Case) -> bool:

@@ -32,7 +32,8 @@ def hot(situation: Situation) -> Facts | None:
     unknown = situation.process is not None and situation.bath_temperature is None
     if not (scalding or unknown or situation.steps & _HOT_STEPS):
         return None
-    return {"hottest": stated(max(scalding, default=None), TEMPERATURE)}
+    hottest = max(scalding, default=None)
+    return {"hottest": "a step before or after" if hottest is None else stated(hottest, TEMPERATURE)}
 
 
 def heater_dry(situation: Situation) -> Facts | None:

@@ -13,6 +13,7 @@ from lineplanner.inputs.tables import ProcessDefaults
 from lineplanner.load import LoadAreas, conductor_named
 from lineplanner.quantities import (
     COUNT,
+    ICE_POINT,
     LENGTH,
     RATIO,
     RESISTANCE,
@@ -33,6 +34,8 @@ Role = Literal["bus", "joint", "saddle", "flight bar", "rack", "contacts"]
 _SERIES = Source("resistances in series", Status.DERIVED)
 _BAR = Source("Ohm's law for a bar, resistivity at its working temperature", Status.DERIVED)
 _BAR_TEMPERATURE = Source("flight bar taken as warm as the hotter of bath and shop air", Status.ASSUMPTION)
+_BUS_TEMPERATURE = Source("bus taken as warm as in hot shop air", Status.ASSUMPTION)
+_SHOP_AIR = ICE_POINT.value + 40.0  # K
 _UNIFORM = Source("bar loaded evenly along its length", Status.DERIVED)
 # Far-end drop of a bar loaded evenly, against the drop of the whole current through the whole bar.
 FED_SHARE = {"one end": 0.5, "both ends": 0.125}
@@ -156,7 +159,8 @@ def _sizes(case: Case, bar: Bus | FlightBar) -> Iterator[Figure]:
 
 
 def _bus(bus: Bus, case: Case) -> Element:
-    rho, story = _warm(case, bus.conductor, bus.temperature, _entered(case))
+    warm = (_SHOP_AIR, _BUS_TEMPERATURE) if bus.temperature is None else (bus.temperature, _entered(case))
+    rho, story = _warm(case, bus.conductor, *warm)
     section = bus.width * bus.thickness * bus.bars
     resistance = bar_resistance(resistivity=rho, length=bus.length, section=section)
     bars = given("bars side by side", float(bus.bars), COUNT, _entered(case))

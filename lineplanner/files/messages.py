@@ -105,6 +105,7 @@ _RULES = {
     "line.tank": "`{name}` is not a tank of this line. Its tanks: {known}",
     "line.pulses": "a phase-controlled rectifier has 3, 6 or 12 pulses. Add `pulses = 6` or what the nameplate says",
     "line.no_pulses": 'a switch-mode rectifier has no pulses. Take the line out, or write `type = "phase-controlled"`',
+    "line.voltage_limit": "a voltage limit of {limit} is above the rated {rated}. Read nameplate and panel again",
     "line.full_on": "full phase-on gives {full}, less than the rated {rated}. Check both voltages",
     "line.feeds_nothing": "the rectifier feeds no tank. Name at least one of {known}",
     "bath.needs_sulfuric_acid": 'a {kind} bath needs its free sulfuric acid. Add `sulfuric_acid = "180 g/L"` or what '

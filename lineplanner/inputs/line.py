@@ -56,7 +56,7 @@ class Rectifier:
         Voltage | None, Field(VOLTAGE, "voltage at full phase-on", "left out: 1.1 x rated", above=0.0)
     ] = None
     ripple_curve: Annotated[tuple[RipplePoint, ...], Field(None, "measured ripple")] = ()
-    reversing: Annotated[bool, Field(None, "reversing gear")] = False
+    reversing: Annotated[YesNo, Field(None, "reversing gear")] = "unknown"
     can_ramp: Annotated[bool, Field(None, "ramps by itself")] = True
     panel_step: Annotated[Current | None, Field(CURRENT, "panel step, current", above=0.0)] = None
     voltage_step: Annotated[Voltage | None, Field(VOLTAGE, "panel step, voltage", above=0.0)] = None
@@ -72,10 +72,15 @@ class Rectifier:
     ambient: Annotated[Temperature | None, Field(TEMPERATURE, "air at the rectifier")] = None
     entered_by: Annotated[str, Field(None, "entered by", "who read the nameplate, and when")] = ""
 
+    @property
+    def most_voltage(self) -> Voltage:
+        """What the unit goes up to: the limit set on its panel, but never above its rating."""
+        return self.max_voltage if self.voltage_limit is None else min(self.max_voltage, self.voltage_limit)
+
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Bus:
-    """A run of bus bar or cable: one pole's length, bars side by side."""
+    """A run of bus bar or cable; length of both poles together, bars side by side."""
 
     name: Annotated[str, Field(None, "name")]
     conductor: Annotated[str, Field(None, "material", "row of the conductors table")]
@@ -83,7 +88,10 @@ class Bus:
     width: Annotated[Length, Field(LENGTH, "width of one bar", above=0.0)]
     thickness: Annotated[Length, Field(LENGTH, "thickness of one bar", above=0.0)]
     bars: Annotated[int, Field(COUNT, "bars side by side", low=1, high=20)] = 1
-    temperature: Annotated[Temperature, Field(TEMPERATURE, "working temperature")] = 313.15
+    temperature: Annotated[
+        Temperature | None,
+        Field(TEMPERATURE, "working temperature", "left out: taken as warm as in hot shop air"),
+    ] = None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -105,7 +113,7 @@ class FlightBar:
     length: Annotated[Length, Field(LENGTH, "length between saddles", above=0.0)]
     width: Annotated[Length, Field(LENGTH, "width", above=0.0)]
     thickness: Annotated[Length, Field(LENGTH, "thickness", above=0.0)]
-    fed: Annotated[Literal["one end", "both ends"], Field(None, "fed at")] = "one end"
+    fed: Annotated[Literal["one end", "both ends"], Field(None, "fed at")]
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -34,6 +34,7 @@ Content = Literal[
     "hydrochloric-strip",
     "hot-water-seal",
     "dichromate-seal",
+    "nickel-acetate-seal",
     "nickel-seal",
     "dye",
     "grind",

@@ -119,6 +119,10 @@ def _rectifier(rectifier: Rectifier, tanks: list[str], path: Path) -> Iterator[P
     if full is not None and exceeds(rated, full):
         facts = {"full": Quantity(full, VOLTAGE), "rated": Quantity(rated, VOLTAGE)}
         yield Problem((*path, "full_on_voltage"), "line.full_on", facts)
+    limit = rectifier.voltage_limit
+    if limit is not None and limit > rated:
+        over = {"limit": Quantity(limit, VOLTAGE), "rated": Quantity(rated, VOLTAGE)}
+        yield Problem((*path, "voltage_limit"), "line.voltage_limit", over)
 
 
 # --- bath and material -----------------------------------------------------------------------------------

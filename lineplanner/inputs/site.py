@@ -28,7 +28,7 @@ class Site:
         Literal["osha", "acgih", "eu"],
         Field(None, "basis of the acid mist limit", "decides the exhaust class"),
     ] = "eu"
-    altitude: Annotated[Length, Field(LENGTH, "altitude")] = 0.0
-    ambient: Annotated[Temperature, Field(TEMPERATURE, "hottest air at the rectifiers")] = 308.15
+    altitude: Annotated[Length, Field(LENGTH, "altitude")]
+    ambient: Annotated[Temperature, Field(TEMPERATURE, "hottest air at the rectifiers")]
     first_load: Annotated[str | None, Field(None, "first load", "shown first", ref="load")] = None
     adopted: Annotated[tuple[Adopted, ...], Field(None, "adopted limits", key="adopted")] = ()

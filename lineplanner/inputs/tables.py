@@ -207,6 +207,7 @@ class Limits:
     strong_steel: Annotated[
         Sourced, Field(STRESS, "steel that needs the design owner's authority", above=0.0)
     ]
+    strong_hardness: Annotated[Sourced, Field(RATIO, "hardness HRC that needs that authority", above=0.0)]
     bake_steel: Annotated[Sourced, Field(STRESS, "steel that needs a bake", above=0.0)]
     contact_force: Annotated[Sourced, Field(FORCE, "force of one contact", above=0.0)]
     contact_hardness: Annotated[Sourced, Field(STRESS, "hardness of the softer contact metal", above=0.0)]
@@ -255,6 +256,9 @@ class ConductivityTable:
     acid: Annotated[Literal["sulfuric", "chromic"], Field(None, "acid")]
     rows: Annotated[tuple[ConductivityRow, ...], Field(None, "rows, by rising strength", key="row")]
     uncertainty: Annotated[Ratio, Field(RATIO, "uncertainty")]
+    aluminium_loss: Annotated[
+        Ratio, Field(RATIO, "relative loss for each g/L of dissolved aluminium", low=0.0, high=0.1)
+    ] = 0.0
     source: Annotated[str, Field(None, "source")]
     status: Annotated[Status, Field(None, "status")]
 

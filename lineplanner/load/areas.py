@@ -19,7 +19,8 @@ from lineplanner.quantities import Area, Current, Length, Mass, Ratio
 class Item:
     """All parts of one drawing and one material on the rack. Areas are sums over them in m^2.
 
-    contacts and contact_current are those of one part, the least of all places; None where only counted.
+    contacts and contact_current are those of one part, the least of all places; None where only counted. dry and cut
+    count the parts wholly and partly above the solution level.
     """
 
     part: str
@@ -39,6 +40,7 @@ class Item:
     mass_each: Mass
     wet_each: Area
     dry: int
+    cut: int
     ledger: Ledger
 
 
@@ -98,6 +100,7 @@ class _Sum:
     largest: float = 0.0
     wet_each: float = 0.0
     dry: int = 0
+    cut: int = 0
     contacts: int | None = None
     contact_current: float | None = None
     contact_metal: str = ""
@@ -119,7 +122,7 @@ def _items(case: Case, process: ProcessDefaults, drop: Length) -> Iterator[Item]
             sums[hang.part, material] = _Sum(case.materials[material])
         total = sums[hang.part, material]
         for part_ledger, number in _ledgers(hung[kind], hang, places, drop):
-            _add(total, part_ledger, number)
+            _add(total, part_ledger, number, hung[kind].full)
         _add_contacts(total, case, part, hang, places)
     for (stem, _), total in sums.items():
         part = case.parts[stem]
@@ -143,6 +146,7 @@ def _items(case: Case, process: ProcessDefaults, drop: Length) -> Iterator[Item]
             mass_each=part.mass if part.mass is not None else volume(part) * total.material.density,
             wet_each=total.wet_each,
             dry=total.dry,
+            cut=total.cut,
             ledger=total.ledger,
         )
 
@@ -194,12 +198,14 @@ def _ledgers(
         yield hung.full, under
 
 
-def _add(total: _Sum, part_ledger: Ledger, number: int) -> None:
+def _add(total: _Sum, part_ledger: Ledger, number: int, full: Ledger) -> None:
     total.count += number
     total.wet += part_ledger.wet * number
     total.carrying += part_ledger.carrying * number
     total.significant += part_ledger.significant * number
-    total.dry += number if part_ledger.wet <= 0.0 else 0
+    if part_ledger is not full:
+        total.dry += number if part_ledger.wet <= 0.0 else 0
+        total.cut += number if 0.0 < part_ledger.wet < full.wet else 0
     if total.ledger is None or part_ledger.carrying > total.largest:
         total.ledger = part_ledger
         total.largest = part_ledger.carrying

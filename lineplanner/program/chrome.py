@@ -95,7 +95,7 @@ def run_chrome(job: Job, rectifier: Rectifier, deposition: Deposition) -> Run:
     build = _Build(job=job, step=step, stages=[], deposit=0.0, deposition=deposition)
     build.start(start_of(job), current)
     rate = deposition.rate(current / area)
-    limit = rectifier.voltage_limit if rectifier.voltage_limit is not None else rectifier.max_voltage
+    limit = rectifier.most_voltage
     if rate <= 0.0:
         return unreachable(
             rectifier=rectifier,

@@ -8,6 +8,8 @@ from lineplanner.program.panel import rounded_up
 from lineplanner.program.softstart import Segment, SoftStart
 from lineplanner.quantities import Ratio, Thickness, Time, Voltage
 
+PIECE = 4  # Runge-Kutta steps that one drawn piece takes
+_EVEN = 1e-6  # s
 STEPS = 24  # Runge-Kutta steps from the crossover to the latest end
 _TURNS = 80  # of the root search, at most
 _CLOSE = 1e-12  # relative width at which a root is found
@@ -15,9 +17,13 @@ _CLOSE = 1e-12  # relative width at which a root is found
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Held:
-    """How a run goes on at the voltage limit; shares are of the set current."""
+    """How a run goes on at the voltage limit; shares are of the set current.
+
+    points are (time, equivalent time, share) from the crossover to the end, close enough to draw straight lines.
+    """
 
     reached: Time
+    points: tuple[tuple[Time, Time, Ratio], ...]
     share_at_start: Ratio
     share_at_end: Ratio
     equivalent: Time
@@ -91,18 +97,23 @@ def hold_at_voltage(
     time, equivalent = reached = supply.crossing(start, total)
     cap = total * (1.0 + most_stretch)
     step = (cap - time) / STEPS
-    for _ in range(STEPS):
+    points = [(time, equivalent)]
+    for number in range(STEPS):
         later = supply.step(equivalent, time, step)
         if thickness(later, time + step) >= aim:
             break
         time, equivalent = time + step, later
+        if number % PIECE == PIECE - 1:
+            points.append((time, equivalent))
     end = cap
     if time < cap - 0.5 * step:
         part = _part_to_aim(supply, equivalent, time, step, thickness, aim)
         end = min(rounded_up(time + part, clock), cap)
         equivalent = supply.step(equivalent, time, end - time)
+    points = [point for point in points if point[0] < end - _EVEN] + [(end, equivalent)]
     return Held(
         reached=reached[0],
+        points=tuple((t, e, supply.share(e, t)) for t, e in points),
         share_at_start=supply.share(reached[1], reached[0]),
         share_at_end=supply.share(equivalent, end),
         equivalent=equivalent,

@@ -4,7 +4,13 @@ from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 
 from lineplanner.bath.gas import hydrogen_flow, oxygen_flow
-from lineplanner.bath.heat import REACTION_VOLTAGE, bath_heat_anodizing, bath_heat_chrome
+from lineplanner.bath.heat import (
+    REACTION_VOLTAGE,
+    WATER_VOLTAGE,
+    bath_heat_anodizing,
+    bath_heat_chrome,
+    cooling_heat_chrome,
+)
 from lineplanner.program.job import Job
 from lineplanner.program.stages import Run, Stage
 from lineplanner.quantities import (
@@ -13,6 +19,7 @@ from lineplanner.quantities import (
     FLOW,
     ICE_POINT,
     POWER,
+    TIME,
     VOLTAGE,
     Current,
     CurrentDensity,
@@ -26,7 +33,9 @@ from lineplanner.trace import Figure, given, result
 
 GAS_TEMPERATURE = ICE_POINT.value + 25.0  # K; the gas figures are stated at 25 degC and one atmosphere
 _FARADAY = Source("Faraday's law and the ideal gas law, at 25 degC and 101325 Pa", Status.DERIVED)
-_HEAT = Source("current x (volts at the tank + reaction volts)", Status.DERIVED)
+_HEAT = Source(
+    "current x (volts at the tank and of the reaction); the volts are estimates", Status.ASSUMPTION
+)
 _VOLTS = Source("voltage model of this program", Status.ASSUMPTION)
 _OXYGEN = Source("charge that grows no film is taken to make oxygen", Status.ASSUMPTION)
 
@@ -36,9 +45,10 @@ Efficiency = Callable[[CurrentDensity], Ratio | None]
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Emissions:
-    """Heat and gas of a run. None where no run could be made."""
+    """Heat and gas of a run; to_cool is what the cooling has to take: no mere moment, no credit for the reaction."""
 
     heat_peak: Power
+    to_cool: Power
     heat_mean: Power
     electrical_peak: Power
     hydrogen: Flow
@@ -55,6 +65,7 @@ def emissions_of(job: Job, run: Run, *, efficiency: Efficiency, film_share: Rati
     if not live:
         return None
     heats = [_heats(job, s, efficiency) for s in live]
+    chrome = job.process.name == "chrome-hard"
     time = sum(s.duration for s in live)
     gases = [_gases(s, efficiency, film_share) for s in live]
     hydrogen_current = max(h for h, _ in gases)
@@ -67,11 +78,19 @@ def emissions_of(job: Job, run: Run, *, efficiency: Efficiency, film_share: Rati
     electrical = max(max(s.from_current * s.from_voltage, s.to_current * s.to_voltage) for s in live)
     return Emissions(
         heat_peak=peak,
+        to_cool=_to_cool(job, live, heats, efficiency),
         heat_mean=mean,
         electrical_peak=electrical,
         hydrogen=hydrogen,
         oxygen=oxygen,
-        figures=_figures(live, peak, mean, electrical, hydrogen, oxygen, hydrogen_current, oxygen_current),
+        figures=_figures(
+            live,
+            heats,
+            (peak, mean, electrical),
+            (hydrogen, oxygen),
+            (hydrogen_current, oxygen_current),
+            chrome=chrome,
+        ),
     )
 
 
@@ -95,6 +114,21 @@ def _heat(job: Job, stage: Stage, current: Current, terminal: Voltage, efficienc
     return max(0.0, bath_heat_chrome(current=current, voltage=at_tank, efficiency=share))
 
 
+def _to_cool(job: Job, live: list[Stage], heats: list[tuple[Power, Power]], efficiency: Efficiency) -> Power:
+    """The highest heat that lasts longer than a short time; in chrome the whole of the electrical power at the tank."""
+    short = job.tables.limits.overload_time.value
+    lasting = [i for i, s in enumerate(live) if s.duration > short] or list(range(len(live)))
+    if efficiency(live[-1].density) is None:
+        return max(max(heats[i]) for i in lasting)
+    return max(_electrical(job, live[i]) for i in lasting)
+
+
+def _electrical(job: Job, stage: Stage) -> Power:
+    """Electrical power at the tank, circuit left out, at the hotter end of a stage."""
+    ends = ((stage.from_current, stage.from_voltage), (stage.to_current, stage.to_voltage))
+    return max(cooling_heat_chrome(current=i, voltage=max(0.0, v - job.resistance * i)) for i, v in ends)
+
+
 def _gases(stage: Stage, efficiency: Efficiency, film_share: Ratio) -> tuple[Current, Current]:
     """The part of a stage's peak current that makes hydrogen, and the part that makes oxygen."""
     share = efficiency(stage.density)
@@ -106,59 +140,55 @@ def _gases(stage: Stage, efficiency: Efficiency, film_share: Ratio) -> tuple[Cur
 
 def _figures(
     live: list[Stage],
-    peak: Power,
-    mean: Power,
-    electrical: Power,
-    hydrogen: Flow,
-    oxygen: Flow,
-    hydrogen_current: Current,
-    oxygen_current: Current,
+    ends: list[tuple[Power, Power]],
+    heats: tuple[Power, Power, Power],
+    gases: tuple[Flow, Flow],
+    currents: tuple[Current, Current],
+    *,
+    chrome: bool,
 ) -> Mapping[str, Figure]:
-    current = given(
-        "peak current", max(s.peak for s in live), CURRENT, Source("program of this plan", Status.DERIVED)
-    )
+    """Peak, mean and electrical heat, hydrogen and oxygen, with the currents that make them."""
+    plan = Source("program of this plan", Status.DERIVED)
+    current = given("peak current", max(s.peak for s in live), CURRENT, plan)
     volts = given("volts, estimate", max(max(s.from_voltage, s.to_voltage) for s in live), VOLTAGE, _VOLTS)
-    reaction = given("reaction volts", REACTION_VOLTAGE.value, VOLTAGE, REACTION_VOLTAGE.source)
-    share = given("hydrogen-making current", hydrogen_current, CURRENT, _FARADAY)
-    oxygen_share = given("oxygen-making current", oxygen_current, CURRENT, _OXYGEN)
+    constant = WATER_VOLTAGE if chrome else REACTION_VOLTAGE
+    reaction = given("reaction volts", constant.value, VOLTAGE, constant.source)
+    words = "current x (tank volts - reaction)" if chrome else "current x (tank volts + reaction)"
+    power = "P = I (V - E)" if chrome else "P = I (V + E)"
     law = "dV/dt = I R T / (z F p)"
+    share = given("hydrogen-making current", currents[0], CURRENT, _FARADAY)
+    oxygen = given("oxygen-making current", currents[1], CURRENT, _FARADAY if chrome else _OXYGEN)
+    peak = result("heat into the bath, peak", heats[0], POWER, words, power, _HEAT, current, volts, reaction)
+    parts = [
+        figure
+        for stage, (first, last) in zip(live, ends, strict=True)
+        for figure in (
+            given(f"{stage.stage}, mean heat", 0.5 * (first + last), POWER, _HEAT),
+            given(f"{stage.stage}, time", stage.duration, TIME, plan),
+        )
+    ]
+    words_of_mean = "heat of each stage by its time, over the time with current on"
+    mean = result(
+        "heat into the bath, mean", heats[1], POWER, words_of_mean, "sum P t / sum t", _HEAT, *parts
+    )
+    electrical = result(
+        "electrical power, peak",
+        heats[2],
+        POWER,
+        "current x terminal volts",
+        "P = I V",
+        _HEAT,
+        current,
+        volts,
+    )
     return {
-        "heat.into_bath_peak_W": result(
-            "heat into the bath, peak",
-            peak,
-            POWER,
-            "current x (tank volts + reaction)",
-            "P = I (V + E)",
-            _HEAT,
-            current,
-            volts,
-            reaction,
-        ),
-        "heat.into_bath_mean_W": result(
-            "heat into the bath, mean",
-            mean,
-            POWER,
-            "mean over the time with current on",
-            "P = sum P t / sum t",
-            _HEAT,
-            current,
-            volts,
-            reaction,
-        ),
-        "heat.electrical_peak_W": result(
-            "electrical power, peak",
-            electrical,
-            POWER,
-            "current x terminal volts",
-            "P = I V",
-            _HEAT,
-            current,
-            volts,
-        ),
+        "heat.into_bath_peak_W": peak,
+        "heat.into_bath_mean_W": mean,
+        "heat.electrical_peak_W": electrical,
         "gas.hydrogen_m3_per_h": result(
-            "hydrogen", hydrogen, FLOW, "two electrons for each molecule", law, _FARADAY, share
+            "hydrogen", gases[0], FLOW, "two electrons a molecule", law, _FARADAY, share
         ),
         "gas.oxygen_m3_per_h": result(
-            "oxygen", oxygen, FLOW, "four electrons for each molecule", law, _FARADAY, oxygen_share
+            "oxygen", gases[1], FLOW, "four electrons a molecule", law, _FARADAY, oxygen
         ),
     }

@@ -1,6 +1,6 @@
 """How fast each item of an anodizing load grows, and what volts it takes."""
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 from lineplanner.bath.coupons import one_coupon_growth, two_coupon_fit
@@ -19,6 +19,7 @@ from lineplanner.quantities import (
     Growth,
     Rate,
     Ratio,
+    Temperature,
 )
 from lineplanner.sources import Source, Status
 from lineplanner.trace import Figure, given, result
@@ -62,9 +63,12 @@ def film_law(
     law = law or law_of(bath)
     factor, scale = family.growth_factor, process.growth_scale
     base = tables.growth.gross_growth.value if law == "growth-dissolution" else GROWTH_720.value
-    loss = _loss(bath, tables.growth) if law == "growth-dissolution" else 0.0
+    fits = law == "growth-dissolution"
+    loss = _loss(bath, tables.growth, bath.temperature) if fits else 0.0
     coupons = [c for c in bath.coupons if c.base == family.name]
-    shown, loss = _shown_by_coupons(coupons, loss, fit_loss=law == "growth-dissolution")
+    shown, loss = _shown_by_coupons(
+        coupons, loss, lambda at: _loss(bath, tables.growth, at) if fits else 0.0, fit_loss=fits
+    )
     coupon = 1.0 if shown is None else shown / (base * scale.value * factor.value)
     growth = base * scale.value * coupon
     return FilmLaw(
@@ -82,16 +86,19 @@ def film_law(
     )
 
 
-def _loss(bath: Bath, law: GrowthLaw) -> Rate:
+def _loss(bath: Bath, law: GrowthLaw, temperature: Temperature) -> Rate:
     if bath.sulfuric_acid is None:
         return 0.0
-    return dissolution_rate(temperature=bath.temperature, acid=bath.sulfuric_acid, law=law)
+    return dissolution_rate(temperature=temperature, acid=bath.sulfuric_acid, law=law)
 
 
-def _shown_by_coupons(coupons: Sequence[Coupon], loss: Rate, *, fit_loss: bool) -> tuple[Growth | None, Rate]:
+def _shown_by_coupons(
+    coupons: Sequence[Coupon], loss: Rate, loss_at: Callable[[Temperature], Rate], *, fit_loss: bool
+) -> tuple[Growth | None, Rate]:
     """Growth (alloy factor included) and loss as the coupons show them; None without any.
 
-    Fitted from a pair run with one charge at unlike densities, else the mean of single coupons at the law's loss.
+    Fitted from a pair run with one charge at unlike densities, else the mean of single coupons, each with the law's
+    loss at its own temperature.
     """
     if not coupons:
         return None, loss
@@ -105,10 +112,14 @@ def _shown_by_coupons(coupons: Sequence[Coupon], loss: Rate, *, fit_loss: bool) 
             second_thickness=second.thickness,
             second_time=second.time,
         )
-        return fit.growth, fit.dissolution
+        there = loss_at(first.temperature)
+        return fit.growth, fit.dissolution * (loss / there if there > 0.0 else 1.0)
     shown = [
         one_coupon_growth(
-            thickness=c.thickness, charge_density=c.current_density * c.time, time=c.time, dissolution=loss
+            thickness=c.thickness,
+            charge_density=c.current_density * c.time,
+            time=c.time,
+            dissolution=loss_at(c.temperature),
         )
         for c in coupons
     ]

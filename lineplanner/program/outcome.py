@@ -4,6 +4,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 
 from lineplanner.bath.efficiency import chromic_acid_consumption
+from lineplanner.bath.faraday import CHROMIUM_DEPOSIT
 from lineplanner.program.job import Job
 from lineplanner.program.runner import Runner
 from lineplanner.program.stages import Run
@@ -43,7 +44,7 @@ def outcome_of(job: Job, runner: Runner, run: Run, known: Mapping[str, Figure]) 
     build_up = share * run.thickness
     steady = run.stages[-1].density
     efficiency = runner.efficiency(steady)
-    consumed = _consumed(job, runner, run)
+    consumed = _consumed(job, run)
     figures = _figures(job, build_up, removed, known["thickness.expected_m"], chrome=chrome)
     if efficiency is not None and consumed is not None:
         law = "eta = k min(cap, eta0 g(i, T)/g0 (1 - a (c - c0)))"
@@ -81,17 +82,14 @@ def outcome_of(job: Job, runner: Runner, run: Run, known: Mapping[str, Figure]) 
     )
 
 
-def _consumed(job: Job, runner: Runner, run: Run) -> Mass | None:
-    """Chromium trioxide that the deposit takes, stage by stage; None for anodizing."""
-    total = 0.0
-    for stage in run.stages:
-        if stage.polarity != "work cathodic":
-            continue
-        efficiency = runner.efficiency(0.5 * (stage.from_current + stage.to_current) / job.areas.carrying)
-        if efficiency is None:
-            return None
-        total += chromic_acid_consumption(charge=stage.charge, efficiency=efficiency)
-    return total if job.process.name == "chrome-hard" else None
+def _consumed(job: Job, run: Run) -> Mass | None:
+    """Chromium trioxide that the deposit takes, by the mean efficiency that the deposit shows; None for anodizing."""
+    if job.process.name != "chrome-hard" or not run.forward or run.thickness is None:
+        return None
+    family = next(f for f in job.tables.chrome if f.name == job.bath.family)
+    deposit = run.thickness * job.areas.carrying * family.deposit_density.value
+    mean = deposit / (CHROMIUM_DEPOSIT.equivalent * run.forward)
+    return chromic_acid_consumption(charge=run.forward, efficiency=mean)
 
 
 def _figures(

@@ -2,7 +2,11 @@
 
 from dataclasses import replace
 
-from lineplanner.bath.conductivity import bath_conductivity, conductivity_with_metals
+from lineplanner.bath.conductivity import (
+    bath_conductivity,
+    conductivity_with_aluminium,
+    conductivity_with_metals,
+)
 from lineplanner.inputs.bath import Bath
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.change import apply_change
@@ -43,7 +47,7 @@ def job_of(case: Case, process: ProcessDefaults, areas: LoadAreas, resistance: R
 def conductivity_of(bath: Bath, tables: tuple[ConductivityTable, ...]) -> Conductivity:
     """How well the bath conducts as it is: by its main acid, less for dissolved metal, times the shop's factor.
 
-        kappa = k kappa_table(c, T), less for metals in a chrome bath
+        kappa = k kappa_table(c, T), less for dissolved metal
 
     Parameters
         bath: acid, metals, temperature T and the shop's own factor k
@@ -51,7 +55,7 @@ def conductivity_of(bath: Bath, tables: tuple[ConductivityTable, ...]) -> Conduc
     Returns
         kappa [S/m]
     Valid
-        as the tables; dissolved aluminium is left to the shop's factor
+        as the tables
     Source
         bath.conductivity
     Example
@@ -74,5 +78,9 @@ def conductivity_of(bath: Bath, tables: tuple[ConductivityTable, ...]) -> Conduc
             chromic_acid=bath.chromic_acid,
             trivalent_chromium=bath.trivalent_chromium or 0.0,
             iron=bath.iron or 0.0,
+        )
+    elif not chromic and bath.dissolved_aluminium:
+        plain = conductivity_with_aluminium(
+            conductivity=plain, aluminium=bath.dissolved_aluminium, relative_loss=table.aluminium_loss
         )
     return plain * bath.conductivity_factor

@@ -7,16 +7,18 @@ from typing import Protocol
 from lineplanner.findings import Finding
 from lineplanner.inputs.line import Rectifier
 from lineplanner.inputs.shares import PositionShares
-from lineplanner.program.anodizing import Films, films_of, hold_for, rate_of, run_anodizing
+from lineplanner.program.anodizing import Films, films_of, hold_for, rate_of
 from lineplanner.program.band import Input, forward_anodizing, forward_chrome, uncertain_inputs
-from lineplanner.program.checks import check_anodizing, check_chrome
+from lineplanner.program.checks_anodizing import check_anodizing
+from lineplanner.program.checks_chrome import check_chrome
 from lineplanner.program.chrome import run_chrome
+from lineplanner.program.controlled import run_anodizing
 from lineplanner.program.deposition import Deposition, deposition_of
 from lineplanner.program.growth import FilmLaw
 from lineplanner.program.job import HALF_MINUTE, MINUTE, Job
 from lineplanner.program.softstart import soft_start_of
 from lineplanner.program.stages import Run
-from lineplanner.program.voltage_run import run_by_voltage
+from lineplanner.program.voltage_run import last_hold, run_by_voltage
 from lineplanner.quantities import CurrentDensity, Rate, Ratio, Thickness, Time
 from lineplanner.sources import Source
 from lineplanner.trace import Figure
@@ -92,7 +94,11 @@ class Anodizing:
         return min(zip(run.items, self.films.items, strict=True), key=lambda pair: pair[0].thickness)[1][1]
 
     def time_for(self, run: Run, thickness: Thickness) -> Time | None:
-        if self.by_voltage or run.panel_current is None:
+        if self.by_voltage and run.stages:
+            last = run.stages[-1]
+            hold = last_hold(self.films, run.stages[:-1], last.start, last.from_current, thickness)
+            return None if hold is None else last.start + hold
+        if run.panel_current is None:
             return None
         start = soft_start_of(self.job.recipe, tuple(f.family for _, f in self.films.items), self.job.density)
         film = self._slowest(run)

@@ -16,7 +16,8 @@ class Stage:
     """One stage: currents are linear in time between its ends and never negative; polarity carries the sign.
 
     Voltages are at the rectifier's terminals: an estimate under current control, the setting under voltage control.
-    density is that of the part at the stage's end, per carrying area.
+    density is that of the part at the stage's end, per carrying area. passed is the charge where the current is not
+    linear (a decay at the voltage limit); None where it is.
     """
 
     stage: StageName
@@ -29,6 +30,7 @@ class Stage:
     from_voltage: Voltage
     to_voltage: Voltage
     density: CurrentDensity
+    passed: Charge | None = None
 
     @property
     def duration(self) -> Time:
@@ -36,6 +38,8 @@ class Stage:
 
     @property
     def charge(self) -> Charge:
+        if self.passed is not None:
+            return self.passed
         return 0.5 * (self.from_current + self.to_current) * (self.end - self.start)
 
     @property

@@ -1,11 +1,13 @@
 """Films run by voltage: stages of volts, current planned from a peak, thickness from the charge."""
 
+from collections.abc import Sequence
+
 from lineplanner.inputs.line import Rectifier
 from lineplanner.program.anodizing import ANODIC, Films, grown, rate_of
 from lineplanner.program.job import HALF_MINUTE, Job
 from lineplanner.program.panel import rounded_up
 from lineplanner.program.stages import ItemRun, Run, Stage, unreachable
-from lineplanner.quantities import Charge, Current, CurrentDensity, Time
+from lineplanner.quantities import Charge, Current, CurrentDensity, Thickness, Time
 
 
 def densities(job: Job) -> tuple[CurrentDensity, CurrentDensity]:
@@ -34,7 +36,7 @@ def run_by_voltage(job: Job, rectifier: Rectifier, films: Films) -> Run:
         volts, current = stage.to.value, mean
         hold = stage.hold
         if hold is None:
-            hold = _last_hold(job, films, stages, time, mean)
+            hold = last_hold(films, stages, time, mean, job.aims.aim)
             if hold is None:
                 return unreachable(
                     rectifier=rectifier,
@@ -49,8 +51,13 @@ def run_by_voltage(job: Job, rectifier: Rectifier, films: Films) -> Run:
     return _finish(rectifier, films, tuple(stages), peak, time)
 
 
-def _last_hold(job: Job, films: Films, stages: list[Stage], time: Time, mean: Current) -> Time | None:
-    """Time at the mean current until the slowest item has its aim, the total rounded up to half minutes."""
+def last_hold(
+    films: Films, stages: Sequence[Stage], time: Time, mean: Current, aim: Thickness
+) -> Time | None:
+    """Time at the mean current until the slowest item has its aim, the total rounded up to half minutes.
+
+    stages are those before it, time is their end; None where no time gets there.
+    """
     charge = sum(s.charge for s in stages)
     holds = []
     for _, film in films.items:
@@ -59,7 +66,7 @@ def _last_hold(job: Job, films: Films, stages: list[Stage], time: Time, mean: Cu
         if rate <= 0.0:
             return None
         so_far = (rate + film.dissolution) * charge / mean - film.dissolution * time
-        holds.append(max(0.0, (job.aims.aim - so_far) / rate))
+        holds.append(max(0.0, (aim - so_far) / rate))
     return rounded_up(time + max(holds), HALF_MINUTE) - time if holds else None
 
 
@@ -90,9 +97,7 @@ def _finish(rectifier: Rectifier, films: Films, stages: tuple[Stage, ...], peak:
         start_voltage=stages[0].to_voltage,
         end_voltage=stages[-1].to_voltage,
         peak_voltage=max(s.to_voltage for s in stages),
-        voltage_limit=rectifier.voltage_limit
-        if rectifier.voltage_limit is not None
-        else rectifier.max_voltage,
+        voltage_limit=rectifier.most_voltage,
         limit_reached=None,
         stretch=0.0,
     )

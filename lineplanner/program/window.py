@@ -8,7 +8,7 @@ from lineplanner.errors import Quantity
 from lineplanner.findings import Finding, Level
 from lineplanner.program.aims import Aims
 from lineplanner.program.panel import rounded_down, rounded_up
-from lineplanner.quantities import THICKNESS, TIME, Thickness, Time
+from lineplanner.quantities import THICKNESS, TIME, Ratio, Thickness, Time
 from lineplanner.sources import Source, Status
 
 SolveTime = Callable[[Thickness], Time | None]  # total time for an expected thickness
@@ -16,10 +16,18 @@ _RECIPE = Source("window of the recipe", Status.ENTERED)
 
 
 def check_window(
-    aims: Aims, *, low: Thickness, high: Thickness, band: Band, solve: SolveTime, clock: Time
+    aims: Aims,
+    *,
+    low: Thickness,
+    high: Thickness,
+    band: Band,
+    solve: SolveTime,
+    clock: Time,
+    limited: bool = False,
 ) -> tuple[Finding, ...]:
     """Cautions where an end of the band leaves the window, with the time that cures it, if one does."""
-    window = _Window(aims=aims, band=band, solve=solve, clock=clock)
+    spread = high / low * (1.0 - band.total) / (1.0 + band.total) if low > 0.0 else 1.0
+    window = _Window(aims=aims, band=band, solve=solve, clock=clock, spread=max(1.0, spread), limited=limited)
     found = []
     if aims.minimum is not None:
         found.append(window.check(low, aims.minimum, below=True))
@@ -34,6 +42,8 @@ class _Window:
     band: Band
     solve: SolveTime
     clock: Time
+    limited: bool  # the volts run out: minutes do not follow from the set current
+    spread: Ratio  # fastest over slowest part: the high end is that of the fastest
 
     def check(self, end: Thickness, limit: Thickness, *, below: bool) -> Finding:
         """One end of the band against its limit."""
@@ -41,6 +51,9 @@ class _Window:
         margin = end / limit - 1.0 if below else 1.0 - end / limit
         if margin >= 0.0:
             return Finding(name, Level.OK, f"{name}.ok", _RECIPE, THICKNESS, end, limit, margin)
+        if self.limited:
+            fix = "band.voltage-limited"
+            return Finding(name, Level.CAUTION, f"{name}.out", _RECIPE, THICKNESS, end, limit, margin, fix)
         wanted = self._wanted(limit, below=below)
         time = None if wanted is None else self.solve(wanted)
         if time is None or wanted is None:
@@ -56,8 +69,10 @@ class _Window:
         least, most = self.aims.minimum, self.aims.maximum
         if below:
             wanted = limit / (1.0 - self.band.total) if self.band.total < 1.0 else None
-            fits = wanted is not None and (most is None or wanted * (1.0 + self.band.total) <= most)
+            fits = wanted is not None and (
+                most is None or wanted * self.spread * (1.0 + self.band.total) <= most
+            )
         else:
-            wanted = limit / (1.0 + self.band.total)
+            wanted = limit / (1.0 + self.band.total) / self.spread
             fits = least is None or wanted * (1.0 - self.band.total) >= least
         return wanted if fits else None

@@ -1,6 +1,7 @@
 """The standards tables of the checkout as records, read without the program's own file room."""
 
 import tomllib
+from dataclasses import MISSING, fields
 from pathlib import Path
 from typing import Any, get_args, get_type_hints
 
@@ -63,8 +64,9 @@ def build(record: Any, given: dict[str, Any]) -> Any:
     for name in hints:
         declared = next(item for item in annotated[name].__metadata__ if isinstance(item, Field))
         keys[name] = declared.key or name
-    assert set(given) == set(keys.values())
-    return record(**{name: _value(hints[name], given[key]) for name, key in keys.items()})
+    optional = {keys[one.name] for one in fields(record) if one.default is not MISSING}
+    assert set(keys.values()) - optional <= set(given) <= set(keys.values())
+    return record(**{name: _value(hints[name], given[key]) for name, key in keys.items() if key in given})
 
 
 def read(stem: str) -> dict[str, Any]:

@@ -152,7 +152,7 @@ def test_a_pair_of_bars_for_5000_a_fails_heat_section_and_drop(bars) -> None:
 
 
 def test_a_rule_on_volts_never_stops_though_it_was_read(bars) -> None:
-    bar = FlightBar(conductor="copper", length=2.0, width=0.05, thickness=0.01)
+    bar = FlightBar(conductor="copper", length=2.0, width=0.05, thickness=0.01, fed="one end")
     found = bars(5000.0, flight_bar=bar)["bus-section"]
     assert (found.source.status, found.level) == (Status.PUBLISHED, Level.CAUTION)
 

@@ -215,8 +215,9 @@ def test_a_reverse_etch_without_reversing_gear_is_a_stop(checked, make_run, make
         make_stage("plate", 60.0, 3600.0, 500.0, 6.0),
     )
     case = make_case(process="chrome-hard")
-    assert checked(run, case)["reversing"].level is Level.STOP
-    assert "reversing" not in checked(run, case, reversing=True)
+    assert checked(run, case, reversing="no")["reversing"].level is Level.STOP
+    assert checked(run, case)["reversing"].level is Level.CAUTION  # not known is not none
+    assert "reversing" not in checked(run, case, reversing="yes")
     elsewhere = make_case(process="chrome-hard", recipe={"reverse_tank": "etch tank"})
     assert checked(run, elsewhere)["reversing"].level is Level.NOTE
 

@@ -47,16 +47,16 @@ def exhaust(share: float, *, proven: bool = True) -> Exhaust:
         (0.011, Level.STOP, "hydrogen.fail"),
     ],
 )
-def test_hydrogen_in_the_exhaust_by_its_two_marks(make_case, said, share, level, key) -> None:
+def test_hydrogen_in_the_exhaust_by_its_two_marks(make_run, make_case, said, share, level, key) -> None:
     # a quarter of the lower flammable limit, 29 CFR 1910.124(b)(3) (read); a tenth of it by common practice
-    found = one(check_hydrogen(1e-3, make_case(exhaust=exhaust(share))), said)
+    found = one(check_hydrogen(1e-3, make_run(), make_case(exhaust=exhaust(share))), said)
     assert (found.level, found.key, found.value) == (level, key, pytest.approx(share))
 
 
-def test_a_flow_that_is_not_proven_does_not_count(make_case, said) -> None:
-    quiet = one(check_hydrogen(1e-3, make_case(exhaust=exhaust(0.001, proven=False))), said)
+def test_a_flow_that_is_not_proven_does_not_count(make_run, make_case, said) -> None:
+    quiet = one(check_hydrogen(1e-3, make_run(), make_case(exhaust=exhaust(0.001, proven=False))), said)
     assert (quiet.level, quiet.key, quiet.margin) == (Level.NOTE, "hydrogen.unproven", None)
-    too_much = check_hydrogen(1e-3, make_case(exhaust=exhaust(0.02, proven=False)))
+    too_much = check_hydrogen(1e-3, make_run(), make_case(exhaust=exhaust(0.02, proven=False)))
     assert [f.level for f in too_much] == [Level.NOTE, Level.STOP]
 
 
@@ -65,13 +65,13 @@ def test_a_flow_that_is_not_proven_does_not_count(make_case, said) -> None:
     [(None, "hydrogen.no-exhaust"), (Exhaust(flow=None), "hydrogen.unknown")],
     ids=["none", "unknown"],
 )
-def test_an_exhaust_that_is_not_known_is_asked_for(make_case, said, fan, key) -> None:
-    found = one(check_hydrogen(1e-3, make_case(exhaust=fan)), said)
+def test_an_exhaust_that_is_not_known_is_asked_for(make_run, make_case, said, fan, key) -> None:
+    found = one(check_hydrogen(1e-3, make_run(), make_case(exhaust=fan)), said)
     assert (found.level, found.key) == (Level.NOTE, key)
 
 
-def test_no_flow_at_all_is_all_hydrogen(make_case, said) -> None:
-    found = one(check_hydrogen(1e-3, make_case(exhaust=Exhaust(flow=0.0, proven=True))), said)
+def test_no_flow_at_all_is_all_hydrogen(make_run, make_case, said) -> None:
+    found = one(check_hydrogen(1e-3, make_run(), make_case(exhaust=Exhaust(flow=0.0, proven=True))), said)
     assert (found.level, found.value) == (Level.STOP, 1.0)
 
 

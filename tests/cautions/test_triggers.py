@@ -215,8 +215,8 @@ CASES: dict[str, tuple[list[dict[str, Any]], list[dict[str, Any]]]] = {
         [{}, {"supply_air": 6.0}],
     ),
     "dc-arc": (
-        [{"planned_peak_current": 100.0}, {"planned_peak_current": None}],
-        [{}, NOTHING | {"planned_peak_current": 500.0}],
+        [{}, {"planned_peak_current": 5.0}, {"planned_peak_current": None}],
+        [NOTHING | {"planned_peak_current": 500.0}],
     ),
     "live-entry": ([{"live_entry": True}], [{}]),
     "dc-ring": (
@@ -356,8 +356,8 @@ def test_every_caution_is_seen_to_come_and_every_one_but_the_last_to_stay_away()
     assert WORDS_BY_RULE.keys() <= RULES.keys()
 
 
-def test_a_load_with_all_known_and_small_still_has_its_acid_its_fan_and_the_estimate(quiet: Make) -> None:
-    assert list(met(quiet())) == ["acid-burn", "fan-first", "estimate"]
+def test_a_load_with_all_known_and_small_still_has_its_acid_fan_arc_and_the_estimate(quiet: Make) -> None:
+    assert list(met(quiet())) == ["acid-burn", "fan-first", "dc-arc", "estimate"]
 
 
 # What must appear on a load of which only the process is known: silence would pass for an answer.

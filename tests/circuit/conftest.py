@@ -97,7 +97,7 @@ def make_case(library: Library) -> Callable[..., Case]:
             baths={"b": bath},
             parts={"plate": part},
             materials={"m": material},
-            site=Site(name="shop", ambient=ambient),
+            site=Site(name="shop", ambient=ambient, altitude=0.0),
             tables=library.tables(),
             cautions=library.cautions(),
         )

@@ -13,6 +13,8 @@ SITE = """\
 format = "lineplanner site 1"
 name = "Example shop"
 units = "us"
+altitude = "200 m"
+ambient = "35 degC"
 """
 
 LINE = """\

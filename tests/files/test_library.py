@@ -285,14 +285,14 @@ def test_a_limit_that_does_not_exist_cannot_be_adopted(site: Path) -> None:
     path.write_text(path.read_text(encoding="utf-8") + "".join(map(entry.format, names)), encoding="utf-8")
     found = told(site)
     assert found[0] == (
-        "configs/site.toml:5: adopted[1].limit: `bus_dorp` is not a limit that can be adopted. "
+        "configs/site.toml:7: adopted[1].limit: `bus_dorp` is not a limit that can be adopted. "
         "The nearest is `bus_drop`"
     )
     assert found[1].startswith(
-        "configs/site.toml:9: adopted[2].limit: `xyzzy` is not a limit that can be adopted. "
+        "configs/site.toml:11: adopted[2].limit: `xyzzy` is not a limit that can be adopted. "
     )
     assert found[2] == (
-        "configs/site.toml:17: adopted[4].limit: `bus_drop` is adopted twice. Keep the entry that counts"
+        "configs/site.toml:19: adopted[4].limit: `bus_drop` is adopted twice. Keep the entry that counts"
     )
 
 

@@ -106,7 +106,7 @@ def make_case(library: Library) -> Callable[..., Case]:
                         tanks=("T",),
                         type="switch-mode",
                         panel_step=step,
-                        reversing=True,
+                        reversing="yes",
                     ),
                 ),
                 tanks=(),

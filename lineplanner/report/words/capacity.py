@@ -40,6 +40,8 @@ MESSAGES = {
     "ripple.phased-far-back": "{rectifier}: {volts} is {value} of its rated volts, current breaks up below {limit}; "
     "unfiltered ripple would be {ideal}",
     "ripple.smoother": "Use a rectifier of fewer volts, a switch-mode one, or enter the ripple measured at these volts",
+    "reversing.unknown": "{rectifier}: whether it can reverse is not known, and the program has a reverse etch",
+    "reversing.enter": "Look at the unit and enter reversing gear in the line file",
     "reversing.none": "The program etches in reverse, and {rectifier} has no reversing gear",
     "reversing.elsewhere-or-gear": "Use a rectifier with reversing gear, or name another tank for the etch",
     "reversing.elsewhere": "Reverse etch is planned in tank {tank}: its rectifier is not checked here",
