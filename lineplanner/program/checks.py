@@ -5,6 +5,7 @@ from collections.abc import Iterable, Iterator
 from lineplanner.errors import Fact, Quantity
 from lineplanner.findings import Finding, Level, note, upper
 from lineplanner.inputs.change import Deviation
+from lineplanner.load import Item
 from lineplanner.program.job import Job
 from lineplanner.program.stages import Run
 from lineplanner.quantities import (
@@ -35,73 +36,72 @@ def check_deviations(changed: Iterable[Deviation]) -> Iterator[Finding]:
 
 
 def check_load(job: Job) -> Iterator[Finding]:
-    """Areas against what was stated, parts left dry, parts merely counted, bases the recipe is not for."""
-    limits = job.tables.limits
+    """Each item against its drawing, the level and the recipe; parts merely counted; the bath's temperature."""
     for item in job.areas.items:
-        if item.stated_area is not None:
-            apart = abs(item.stated_area / item.drawn - 1.0)
-            finding = upper(
-                "area-stated",
-                value=apart,
-                limit=limits.area_difference.value,
-                kind=RATIO,
-                source=limits.area_difference.origin,
-                key="area-stated",
-                fix="area-stated.measure",
-                demand_firm=False,
-                part=item.name,
-                stated=Quantity(item.stated_area, AREA),
-                drawn=Quantity(item.drawn, AREA),
-            )
-            yield finding
-        if item.dry:
-            yield Finding(
-                "level",
-                Level.CAUTION,
-                "level.dry",
-                _RECIPE,
-                fix="level.raise",
-                facts={"part": item.name, "count": item.dry},
-            )
-        if item.cut:
-            facts: dict[str, Fact] = {"part": item.name, "count": item.cut}
-            yield Finding("level", Level.NOTE, "level.cut", _RECIPE, fix="level.mark", facts=facts)
-        if item.significant <= 0.0 < item.carrying:
-            yield Finding(
-                "significant",
-                Level.CAUTION,
-                "significant.none",
-                _RECIPE,
-                fix="significant.faces",
-                facts={"part": item.name},
-            )
-        base = item.material.family if job.process.name != "chrome-hard" else item.material.substrate
-        if base not in job.recipe.bases:
-            named: dict[str, Fact] = {
-                "part": item.name,
-                "base": str(base),
-                "bases": ", ".join(job.recipe.bases),
-            }
-            yield Finding(
-                "recipe-base", Level.STOP, "recipe-base", _RECIPE, fix="recipe-base.choose", facts=named
-            )
+        yield from _stated(job, item)
+        yield from _level(item)
+        yield from _base(job, item)
     if job.areas.counted_only:
         yield note("places", "places.counted", _RECIPE, "places.hang")
-    temperature = job.recipe.temperature
-    own = job.case.load.change is None or job.case.load.change.temperature is None
-    if own and temperature is not None and not temperature.holds(job.bath.temperature):
-        degrees = {
-            "bath": Quantity(job.bath.temperature, TEMPERATURE),
-            "recipe": Quantity(temperature.value, TEMPERATURE),
-        }
+    yield from _bath_temperature(job)
+
+
+def _stated(job: Job, item: Item) -> Iterator[Finding]:
+    """A stated area against the drawn one."""
+    if item.stated_area is None:
+        return
+    limit = job.tables.limits.area_difference
+    yield upper(
+        "area-stated",
+        value=abs(item.stated_area / item.drawn - 1.0),
+        limit=limit.value,
+        kind=RATIO,
+        source=limit.origin,
+        key="area-stated",
+        fix="area-stated.measure",
+        demand_firm=False,
+        part=item.name,
+        stated=Quantity(item.stated_area, AREA),
+        drawn=Quantity(item.drawn, AREA),
+    )
+
+
+def _level(item: Item) -> Iterator[Finding]:
+    """Parts that the level leaves dry or cuts, and parts of which nothing promised is coated."""
+    if item.dry:
+        dry: dict[str, Fact] = {"part": item.name, "count": item.dry}
+        yield Finding("level", Level.CAUTION, "level.dry", _RECIPE, fix="level.raise", facts=dry)
+    if item.cut:
+        cut: dict[str, Fact] = {"part": item.name, "count": item.cut}
+        yield Finding("level", Level.NOTE, "level.cut", _RECIPE, fix="level.mark", facts=cut)
+    if item.significant <= 0.0 < item.carrying:
+        part: dict[str, Fact] = {"part": item.name}
         yield Finding(
-            "bath-temperature",
-            Level.CAUTION,
-            "bath-temperature",
-            _RECIPE,
-            fix="bath-temperature.bring",
-            facts=degrees,
+            "significant", Level.CAUTION, "significant.none", _RECIPE, fix="significant.faces", facts=part
         )
+
+
+def _base(job: Job, item: Item) -> Iterator[Finding]:
+    """An alloy or substrate that the recipe does not name."""
+    base = item.material.substrate if job.process.name == "chrome-hard" else item.material.family
+    if base in job.recipe.bases:
+        return
+    facts: dict[str, Fact] = {"part": item.name, "base": str(base), "bases": ", ".join(job.recipe.bases)}
+    yield Finding("recipe-base", Level.STOP, "recipe-base", _RECIPE, fix="recipe-base.choose", facts=facts)
+
+
+def _bath_temperature(job: Job) -> Iterator[Finding]:
+    """The bath as entered against the recipe; what the load changes on purpose is a deviation, not said twice."""
+    temperature, change = job.recipe.temperature, job.case.load.change
+    own = change is None or change.temperature is None
+    if not own or temperature is None or temperature.holds(job.bath.temperature):
+        return
+    facts: dict[str, Fact] = {
+        "bath": Quantity(job.bath.temperature, TEMPERATURE),
+        "recipe": Quantity(temperature.value, TEMPERATURE),
+    }
+    key, fix = "bath-temperature", "bath-temperature.bring"
+    yield Finding("bath-temperature", Level.CAUTION, key, _RECIPE, fix=fix, facts=facts)
 
 
 def check_aim(run: Run, aim: float, law: Source) -> Iterator[Finding]:

@@ -51,7 +51,7 @@ def check_anodizing(job: Job, run: Run, films: Films) -> Iterator[Finding]:
                 key="burning",
                 fix="burning.lower",
                 demand_firm=len(films.items) == 1,
-                caution_at=1.0,
+                caution_at=most.caution_at,
                 family=family.name,
             )
         ceiling = family.hard_ceiling if hard else job.process.thickness_ceiling
@@ -64,7 +64,7 @@ def check_anodizing(job: Job, run: Run, films: Films) -> Iterator[Finding]:
             key="ceiling",
             fix="ceiling.ask",
             demand_firm=False,
-            caution_at=1.0,
+            caution_at=ceiling.caution_at,
             family=family.name,
         )
         if run.total_time is not None and film.dissolution > 0.0:
@@ -79,7 +79,7 @@ def check_anodizing(job: Job, run: Run, films: Films) -> Iterator[Finding]:
                 source=soft.origin,
                 key="soft-film",
                 fix="soft-film.faster",
-                caution_at=1.0,
+                caution_at=soft.caution_at,
                 family=family.name,
             )
     if job.bath.kind == "sulfuric":
@@ -91,7 +91,13 @@ def check_alloy_time(run: Run, films: Films) -> Iterator[Finding]:
     seen: set[str] = set()
     for _, film in films.items:
         family = film.family
-        if run.panel_current is None or run.total_time is None or not family.delicate or film.calibrated or family.name in seen:
+        if (
+            run.panel_current is None
+            or run.total_time is None
+            or not family.delicate
+            or film.calibrated
+            or family.name in seen
+        ):
             continue
         if film.alloy_factor < 1.0:
             seen.add(family.name)

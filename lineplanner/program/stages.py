@@ -42,6 +42,17 @@ class Stage:
             return self.passed
         return 0.5 * (self.from_current + self.to_current) * (self.end - self.start)
 
+    def current_at(self, time: Time) -> Current:
+        """Current at a time inside the stage, on the straight line between its ends [A]."""
+        share = (time - self.start) / self.duration if self.duration > 0.0 else 1.0
+        return self.from_current + share * (self.to_current - self.from_current)
+
+    def charge_until(self, time: Time) -> Charge:
+        """Charge from the stage's begin to a time inside it [C]; of a decay its share by the straight line."""
+        straight = 0.5 * (self.from_current + self.current_at(time)) * (time - self.start)
+        whole = 0.5 * (self.from_current + self.to_current) * self.duration
+        return straight * self.charge / whole if whole > 0.0 else 0.0
+
     @property
     def peak(self) -> Current:
         return max(self.from_current, self.to_current)

@@ -54,9 +54,25 @@ def run_by_voltage(job: Job, rectifier: Rectifier, films: Films) -> Run:
 def last_hold(
     films: Films, stages: Sequence[Stage], time: Time, mean: Current, aim: Thickness
 ) -> Time | None:
-    """Time at the mean current until the slowest item has its aim, the total rounded up to half minutes.
+    """How long the last voltage is held until the slowest item has its aim.
 
-    stages are those before it, time is their end; None where no time gets there.
+        h = f K (j / I)(Q + I t) - v (t_0 + t)  solved for t, t_0 + t rounded up to half minutes
+
+    Parameters
+        films: f, K, v and the shared area of the items
+        stages: those before, with their charge Q
+        time: t_0, their end [s]
+        mean: I, mean current in the hold [A]
+        aim: h, total per side [m]
+    Returns
+        t; None where no time gets there [s]
+    Valid
+        a steady mean current: an estimate
+    Source
+        bath.growth.film_thickness, solved for time
+    Example
+        >>> last_hold(Films(items=(), weighted_area=1.0), (), 0.0, 100.0, 2e-6) is None
+        True
     """
     charge = sum(s.charge for s in stages)
     holds = []
