@@ -78,10 +78,14 @@ def _of_temperature(unit: Unit) -> Conversion:
     return Conversion(_factor(f"delta_{scale}", "kelvin"), zero, 0.0)
 
 
+_DIGITS = 15  # significant digits of a factor: what is behind them is dust of the multiplication
+
+
 def _factor(source: str, target: str) -> float:
+    """The factor between two units, so rounded that 1 A/dm2 is 100 A/m2 and not a last bit less."""
     import pint
 
     try:
-        return float(registry().convert(1.0, source, target))
+        return float(f"{registry().convert(1.0, source, target):.{_DIGITS}g}")
     except pint.DimensionalityError:
         raise Refusal("unit.wrong_kind") from None
