@@ -67,12 +67,17 @@ def upper(
     key: str,
     fix: str | None = None,
     demand_firm: bool = True,
-    caution_at: float = CAUTION_AT,
+    caution_at: float | None = None,
     **facts: Fact,
 ) -> Finding:
     """A finding for a demand that must not exceed a limit. Unrounded values are compared."""
     margin = 1.0 - value / limit if limit > 0.0 else (0.0 if value <= 0.0 else -1.0)
-    level = level_of(margin, source=source, demand_firm=demand_firm, caution_at=caution_at)
+    level = level_of(
+        margin,
+        source=source,
+        demand_firm=demand_firm,
+        caution_at=CAUTION_AT if caution_at is None else caution_at,
+    )
     return Finding(
         check, level, key, source, kind, value, limit, margin, fix if level is not Level.OK else None, facts
     )

@@ -189,7 +189,7 @@ def _continuous(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]
         key="rectifier-continuous",
         fix=_way(value, limit, facts, "rectifier-continuous"),
         demand_firm=firm_current(run),
-        caution_at=1.0,  # the share is itself the mark at which to take care, below the rating
+        caution_at=limits.continuous_share.caution_at,
     )
     yield replace(finding, facts=facts)
 

@@ -1,7 +1,7 @@
 """When a caution on hydrogen embrittlement applies."""
 
 from lineplanner.cautions.contents import ACIDS, step_contents
-from lineplanner.cautions.facts import NOT_KNOWN, Situation
+from lineplanner.cautions.facts import Situation
 from lineplanner.cautions.measures import exceeds, reaches, stated
 from lineplanner.errors import Fact, Facts
 from lineplanner.quantities import TEMPERATURE, TIME
@@ -28,7 +28,11 @@ AUTHORITY_HARDNESS = Constant(
 BELOW_TEMPER = Constant(
     "how far a bake stays below the last temper", 28.0, "K", Source("MIL-STD-867C, 5.5", Status.PUBLISHED)
 )
-ASK_FIRST = "ask first"  # stands where a bake is not released
+# What stands where a figure of the bake is not known or the bake is not released.
+RULE_WITHIN = "the rule's delay"
+RULE_TIME = "the rule's hours"
+RULE_HEAT = "the rule's heat (ask first)"
+RULE_UNNAMED = "a rule still to be named"
 
 
 def _meets_hydrogen(situation: Situation) -> bool:
@@ -84,16 +88,17 @@ def bake(situation: Situation) -> Facts | None:
     """he-bake: steel that takes up hydrogen; hours and temperature only once the bake is released."""
     if not hardened(situation):
         return None
-    time: Fact = ASK_FIRST
-    temperature: Fact = ASK_FIRST
+    within: Fact = RULE_WITHIN if situation.bake_within is None else stated(situation.bake_within, TIME)
+    time: Fact = RULE_TIME
+    temperature: Fact = RULE_HEAT
     if bake_released(situation):
         time = stated(situation.bake_time, TIME)
         temperature = stated(situation.bake_temperature, TEMPERATURE)
     return {
-        "bake_within": stated(situation.bake_within, TIME),
+        "bake_within": within,
         "bake_time": time,
         "bake_temperature": temperature,
-        "bake_rule": situation.bake_rule or NOT_KNOWN,
+        "bake_rule": situation.bake_rule or RULE_UNNAMED,
     }
 
 

@@ -2,15 +2,24 @@
 
 commands.py  the commands with their options      output.py  what a command hands back, and how it is printed
 opened.py    the site, units and letters in use   fault.py   an internal fault, kept in a log
+checked.py   files read for their problems        approving.py  a recipe approved
 """
 
 import sys
+from collections.abc import Callable
+from typing import TYPE_CHECKING
+
+if TYPE_CHECKING:
+    from lineplanner.cli.opened import Opened, Options
 
 DONE, STOPPED, UNUSABLE, FAULT, INTERRUPTED = 0, 1, 2, 3, 130
 
 
-def main(arguments: list[str]) -> int:
-    """Run one command; the return value is the exit code. A broken pipe is the caller's to end quietly."""
+def main(arguments: list[str], screens: "Callable[[Opened, Options], int] | None" = None) -> int:
+    """Run one command; the return value is the exit code. A broken pipe is the caller's to end quietly.
+
+    screens opens the screens where there is no command; without it the first load's card is printed.
+    """
     import click
 
     from lineplanner.cli.commands import lineplanner
@@ -18,7 +27,7 @@ def main(arguments: list[str]) -> int:
     from lineplanner.errors import PlannerError
 
     try:
-        result = lineplanner.main(args=arguments, prog_name="lineplanner", standalone_mode=False)
+        result = lineplanner.main(args=arguments, prog_name="lineplanner", standalone_mode=False, obj=screens)
         if not isinstance(result, Output):  # --help and --version print by themselves
             return result if isinstance(result, int) else DONE
         write(result)
@@ -33,11 +42,24 @@ def main(arguments: list[str]) -> int:
         return told(error_text(error, error_style(arguments)), UNUSABLE)
     except BrokenPipeError:
         raise
-    except Exception:  # noqa: BLE001 - the last net: no traceback reaches a user
-        from lineplanner.cli.fault import kept
+    except OSError as error:
+        from lineplanner.cli.output import unwritable
 
-        return told(kept(arguments, sys.exc_info()), FAULT)
+        if unwritable(error):
+            why = error.strerror or type(error).__name__
+            return told(f"the output cannot be written: {why}. What was printed is not whole", UNUSABLE)
+        return _fault(arguments)
+    except Exception:  # noqa: BLE001 - the last net: no traceback reaches a user
+        return _fault(arguments)
     return result.code
+
+
+def _fault(arguments: list[str]) -> int:
+    """Keep the log of what was raised, and say so."""
+    from lineplanner.cli.fault import kept
+    from lineplanner.cli.output import told
+
+    return told(kept(arguments, sys.exc_info()), FAULT)
 
 
 def usage_text(error: "click.ClickException") -> str:  # type: ignore[name-defined]  # noqa: F821

@@ -47,13 +47,17 @@ class Commands(click.Group):
 @click.version_option(__version__, message="lineplanner %(version)s")
 @common
 @click.pass_context
-def lineplanner(ctx: click.Context, units: Any, site: str | None, *, ascii_only: bool) -> Output | None:
+def lineplanner(ctx: click.Context, units: Any, site: str | None, *, ascii_only: bool) -> Output | int | None:
     """Plans anodizing and hard-chrome loads: amperes, ramp, minutes.
 
-    Without a command it prints the run card of the site's first load.
+    Without a command it opens the screens; with no terminal it prints the run card of the site's first load.
     """
+    screens: Callable[[Opened, Options], int] | None = ctx.obj
     ctx.obj = Options(units, site, ascii_only)
-    return None if ctx.invoked_subcommand else _first_card(opened(ctx.obj))
+    if ctx.invoked_subcommand:
+        return None
+    site_opened = opened(ctx.obj)
+    return screens(site_opened, ctx.obj) if screens else _first_card(site_opened)
 
 
 def _options(units: Any, site: str | None, ascii_only: bool) -> Options:  # noqa: FBT001 - as click hands it over
@@ -154,8 +158,9 @@ def check_command(files: tuple[str, ...], kind: str | None, **rest: Any) -> Outp
         return Output(schema_text(kind))
     if not files:
         raise InputError("check.nothing")
-    count, problems = problems_of([Path(file) for file in files], options)
-    said = f"lineplanner: {count} file(s) read, {len(problems)} problem(s)"
+    count, problems, changed = problems_of([Path(file) for file in files], options)
+    told = [f"lineplanner: {line}" for line in changed]
+    said = "\n".join([*told, f"lineplanner: {count} file(s) read, {len(problems)} problem(s)"])
     text = "\n".join(word(one, options.units or "metric") for one in problems)
     return Output(text, UNUSABLE if problems else 0, said, ascii=plain_letters(options))
 
@@ -178,9 +183,25 @@ def sources_command(*, as_json: bool, **rest: Any) -> Output:
 @common
 def start_command(folder: str, **rest: Any) -> Output:
     """Write a site to begin with: the demo shop's configs and rack_library."""
+    from lineplanner.errors import InputError
     from lineplanner.files.starter import start
+    from lineplanner.report.layout import typed
 
     options = _options(**rest)
+    if not folder.strip():
+        raise InputError("start.nowhere")
     written = start(folder)
-    text = f"{folder}: {len(written)} files written. Begin with `lineplanner --site {folder}`"
+    text = f"{folder}: {len(written)} files written. Begin with `lineplanner --site {typed(folder)}`"
     return Output(text, ascii=plain_letters(options))
+
+
+@lineplanner.command("approve")
+@click.argument("recipe")
+@click.option("--by", required=True, metavar="NAME", help="Who approves it.")
+@common
+def approve_command(recipe: str, by: str, **rest: Any) -> Output:
+    """Approve a recipe as it stands, from today on. RECIPE is a file or a name."""
+    from lineplanner.cli.approving import approve
+
+    site = opened(_options(**rest))
+    return site.output(approve(site.library, recipe, by=by))

@@ -1,5 +1,6 @@
 """What a command hands back, and how it is printed: letters the terminal has, colour only where it may be."""
 
+import contextlib
 import os
 import re
 import sys
@@ -45,6 +46,18 @@ def write(output: Output) -> None:
         text = _WORD.sub(lambda m: f"{m[1]}{click.style(m[2], fg=_COLOURS[m[2]], bold=True)}", text)
     if text:
         click.echo(text)
+
+
+def unwritable(error: OSError) -> bool:
+    """Whether printing failed: an error of a file names it, one of stdout does not.
+
+    What is still buffered is dropped then, so that it cannot fail again at exit.
+    """
+    if error.filename is not None:
+        return False
+    with contextlib.suppress(OSError):
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+    return True
 
 
 def told(text: str, code: int) -> int:

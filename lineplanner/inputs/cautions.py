@@ -28,6 +28,7 @@ MOMENTS: tuple[Moment, ...] = (
 LONGEST_RAW = 200  # characters of a text as written
 LONGEST_FILLED = 240  # characters with every value filled in
 FILLED_VALUE = 12  # characters that a value may take
+LONGEST_SHORT = 44  # characters of a short text with every value filled in
 
 # id -> the word it has at least, and the values its text must show
 DECLARED: dict[str, tuple[Word, frozenset[str]]] = {
@@ -94,6 +95,9 @@ class CautionText:
     rank: Annotated[int, Field(COUNT, "rank", "within the word; what kills first has the lowest", low=0)]
     moment: Annotated[tuple[Moment, ...], Field(None, "moments")]
     text: Annotated[str, Field(None, "text", "ASCII; values by name in braces")]
+    short: Annotated[
+        str, Field(None, "short text", "what to do, for a card without room; at most 44 characters")
+    ]
     source: Annotated[str, Field(None, "source")]
     as_of: Annotated[date, Field(None, "as of", "when the source was last looked at")]
     status: Annotated[Status, Field(None, "status", "of the weakest figure the text rests on")]
@@ -157,23 +161,31 @@ def text_problems(texts: CautionTexts) -> list[Problem]:
 
 
 def _problems_of(caution: CautionText) -> list[tuple[str, str, dict[str, str | int]]]:
-    """The problems of one text: key, message and facts."""
-    least, values = DECLARED[caution.id]
-    shown = shown_values(caution.text)
-    filled = re.sub(r"\{\w+\}", "x" * FILLED_VALUE, caution.text)
+    """The problems of one caution: key, message and facts."""
+    least, _ = DECLARED[caution.id]
     found: list[tuple[str, str, dict[str, str | int]]] = []
     if WORDS.index(caution.word) > WORDS.index(least):
         found.append(("word", "caution.word_lowered", {"word": caution.word, "least": least}))
     if not caution.moment:
         found.append(("moment", "caution.no_moment", {}))
-    if not caution.text.isascii():
-        found.append(("text", "caution.not_ascii", {}))
-    if set(shown) != values or "{" in filled or "}" in filled:
-        found.append(("text", "caution.values", {"values": ", ".join(sorted(values)) or "none"}))
-    if len(caution.text) > LONGEST_RAW:
-        found.append(("text", "caution.too_long", {"length": len(caution.text), "most": LONGEST_RAW}))
-    elif len(filled) > LONGEST_FILLED:
-        found.append(("text", "caution.too_long", {"length": len(filled), "most": LONGEST_FILLED}))
-    if re.search(r"\b(safe|compliant|compliance)\b", caution.text, re.IGNORECASE):
-        found.append(("text", "caution.promise", {}))
+    return [*found, *_wording(caution, "text"), *_wording(caution, "short")]
+
+
+def _wording(caution: CautionText, key: str) -> list[tuple[str, str, dict[str, str | int]]]:
+    """What is wrong with the text of a caution, or with its short text, which need not show every value."""
+    text: str = getattr(caution, key)
+    values, whole = DECLARED[caution.id][1], key == "text"
+    shown, filled = set(shown_values(text)), re.sub(r"\{\w+\}", "x" * FILLED_VALUE, text)
+    most = LONGEST_FILLED if whole else LONGEST_SHORT
+    found: list[tuple[str, str, dict[str, str | int]]] = []
+    if not text.isascii():
+        found.append((key, "caution.not_ascii", {}))
+    if shown - values or (whole and shown != values) or "{" in filled or "}" in filled:
+        found.append((key, "caution.values", {"values": ", ".join(sorted(values)) or "none"}))
+    if whole and len(text) > LONGEST_RAW:
+        found.append((key, "caution.too_long", {"length": len(text), "most": LONGEST_RAW}))
+    elif len(filled) > most:
+        found.append((key, "caution.too_long", {"length": len(filled), "most": most}))
+    if re.search(r"\b(safe|compliant|compliance)\b", text, re.IGNORECASE):
+        found.append((key, "caution.promise", {}))
     return found

@@ -3,7 +3,7 @@
 from dataclasses import dataclass
 from typing import Annotated
 
-from lineplanner.quantities import Field
+from lineplanner.quantities import RATIO, Field
 from lineplanner.sources import Source, Status
 
 
@@ -31,6 +31,9 @@ class Sourced:
     high: float | None = None
     source: Annotated[str, Field(None, "source", "title, year and place, or who measured it")]
     status: Annotated[Status, Field(None, "status", "how far the number can be trusted")]
+    caution_at: Annotated[
+        float | None, Field(RATIO, "caution from", "share of a limit; left out: 90 %", above=0.0, high=1.0)
+    ] = None
 
     @property
     def origin(self) -> Source:

@@ -4,6 +4,7 @@ from lineplanner.quantities import AREA, RATIO
 from lineplanner.report.area_json import why_text
 from lineplanner.report.area_ledger import Areas, Row
 from lineplanner.report.layout import columns, wrapped
+from lineplanner.report.program_text import area_number, area_unit
 from lineplanner.report.style import Style
 
 
@@ -12,7 +13,8 @@ def area_text(areas: Areas, style: Style) -> str:
     lines = [areas.name, *wrapped(areas.taken, first="  ")]
     for label, area in (("wet", areas.wet), ("carrying", areas.carrying), ("significant", areas.significant)):
         lines.append(f"  {label:<12}{style.show(area, AREA):>12}")
-    rows: list[tuple[str, ...]] = [("face", "count", "drawn", "factor", "wet", "carrying", "significant")]
+    heads = ("count", "drawn", "factor", "wet", "carrying", "significant")
+    rows: list[tuple[str, ...]] = [(f"face, in {area_unit(style)}", *heads)]
     rows += [_row(row, style) for row in areas.rows]
     lines += ["", *columns(rows, right=(1, 2, 3, 4, 5, 6)), ""]
     for row in areas.rows:
@@ -26,7 +28,7 @@ def _row(row: Row, style: Style) -> tuple[str, ...]:
     return (
         row.face,
         str(row.count),
-        style.show(row.area, AREA),
+        area_number(row.area, style),
         style.show(row.factor, RATIO),
-        *(style.show(area, AREA) for area in areas),
+        *(area_number(area, style) for area in areas),
     )

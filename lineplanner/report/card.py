@@ -2,23 +2,20 @@
 
 from collections.abc import Iterator
 
-from lineplanner.cautions.ranking import Caution
 from lineplanner.findings import Level
-from lineplanner.inputs.cautions import WORDS
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Stage
-from lineplanner.quantities import AREA, LENGTH, TIME
-from lineplanner.report.cautions_text import by_moment
+from lineplanner.quantities import AREA, LENGTH, TEMPERATURE, TIME
+from lineplanner.report.card_cautions import card_cautions
 from lineplanner.report.checks_text import said
 from lineplanner.report.digits import CHROME, amperes, charge, moment, volts
 from lineplanner.report.explain import rests_on
-from lineplanner.report.layout import WIDTH, columns, filled, wrapped
+from lineplanner.report.layout import WIDTH, columns, filled, typed, wrapped
 from lineplanner.report.places import places_said
 from lineplanner.report.plan_id import plan_id
 from lineplanner.report.plan_text import LAST_LINE, deviation_lines, recipe_said
 from lineplanner.report.setpoints import (
     caution_line,
-    caution_lines,
     lead_in,
     rectifier_of,
     setpoint_lines,
@@ -30,16 +27,18 @@ from lineplanner.report.words.names import process_name
 from lineplanner.report.words.reasons import surface_word
 
 LINES = 60
-# Moments of this run; a danger that holds at several of them is named again.
-_OF_THE_RUN = ("before loading", "before current", "while current flows", "unloading", "after")
+NOTE_LINES = 3  # of a note on the card
+_NOT_CHECKED = "not checked: fit, gaps, tank depth"
+NO_CURRENT = "the current stays off: a stop forbids this plan"
 RAMP_ROWS = 10
 THICKNESS_BLANKS = 5
 _OUTSIDE = {
-    "current": "Volts are an estimate: a jump tells more than their height. Volts jump or amperes drop: "
-    "current off, look for a lost contact or a burning part.",
+    "current": "Volts are estimates: a jump tells most. Volts jump or amperes drop: current off, look for a "
+    "lost contact or a burning part.",
     "voltage": "Amperes are an estimate. They stay high at the end or rise by themselves: current off, look "
     "for a short or a burning part. None at all: look for a lost contact.",
 }
+_OUTAGE = "Outage: log when and how long; the recipe has no restart, so a person decides on it."
 
 
 def card_text(plan: Plan, style: Style) -> str:
@@ -52,22 +51,21 @@ def card_lines(plan: Plan, style: Style) -> list[str]:
     top = [*_head(plan, style), *_middle(plan, style), *_below(plan, style)]
     bottom = [*_blanks(), LAST_LINE]
     dangers = sum(c.word == "DANGER" for c in plan.cautions)
-    lines, full = _cautions(plan, style, LINES - len(top) - len(bottom))
-    if full < dangers:  # blank lines go before a danger is shortened
+    shown = card_cautions(plan, style, LINES - len(top) - len(bottom))
+    if shown.full < dangers:  # blank lines go before a danger is shortened
         top, bottom = [line for line in top if line], [line for line in bottom if line]
-        lines, _ = _cautions(plan, style, LINES - len(top) - len(bottom))
-    return [*top, *lines, *bottom]
+        shown = card_cautions(plan, style, LINES - len(top) - len(bottom))
+    return [*top, *shown.lines, *bottom]
 
 
 def _head(plan: Plan, style: Style) -> list[str]:
     load = plan.case.load
     typed = [f"{name} {text}" for name, text in (("order", load.order), ("lot", load.lot)) if text]
     lines = filled([f"RUN CARD  {plan.case.name}", *typed, f"plan {plan_id(plan)}"])
-    lines += wrapped(
-        f"{load.name}   {process_name(plan.recipe.process)} in tank {plan.case.tank.name}", rest="  "
-    )
-    approved = f"   {plan.filed.approved_by} {plan.filed.approved_on}" if plan.status == "approved" else ""
-    lines += wrapped(f"{recipe_said(plan)}{approved}", rest="  ")
+    approved = [f"{plan.filed.approved_by} {plan.filed.approved_on}"] if plan.status == "approved" else []
+    where = f"{process_name(plan.recipe.process)} in tank {plan.case.tank.name}"
+    for line in filled([load.name, where, recipe_said(plan), *approved]):
+        lines += wrapped(line, rest="  ")
     lines += deviation_lines(plan, style)
     lines += wrapped(verdict_line(plan, style), rest="  ")
     caution = caution_line(plan, style)
@@ -140,7 +138,7 @@ def _watch(plan: Plan, style: Style) -> list[str]:
     ]
     return [
         *columns(rows, right=(1, 2, 3, 4), indent=""),
-        *wrapped(_OUTSIDE[plan.control], first="  ", rest="  "),
+        *wrapped(_OUTSIDE[plan.control] + (f" {_OUTAGE}" if process == CHROME else ""), first="  "),
     ]
 
 
@@ -148,28 +146,62 @@ def _watch(plan: Plan, style: Style) -> list[str]:
 
 
 def _below(plan: Plan, style: Style) -> list[str]:
-    lines = ["", *wrapped("; ".join(_before(plan, style)), first="BEFORE CURRENT  ", rest="  ")]
-    lines += wrapped("; ".join(_after(plan, style)), first="AFTER CURRENT  ", rest="  ")
-    for text in places_said(plan, style):
-        lines += wrapped(text, first="HANG  ", rest="  ")
-    lines += wrapped("; ".join(_areas(plan, style)), first="AREA  ", rest="  ")
-    return [*lines, *wrapped(_rests(plan), rest="  ")]
+    before = NO_CURRENT if plan.stopped else "; ".join(_before(plan, style))
+    hung = "; ".join([*places_said(plan, style), _NOT_CHECKED])
+    lines = ["", *_notes(plan)]
+    for head, text in (
+        ("BEFORE CURRENT", before),
+        ("AFTER CURRENT", "; ".join(_after(plan, style))),
+        ("HANG", hung),
+        ("AREA", "; ".join(_areas(plan, style))),
+    ):
+        lines += wrapped(text, first=f"{head}  ", rest="  ")
+    return [*lines, *wrapped(f"This plan {rests_on(plan)}.", rest="  ")]
+
+
+def _notes(plan: Plan) -> list[str]:
+    """What recipe and load say in their own words."""
+    lines = []
+    for whose, text in (("recipe", plan.recipe.note), ("load", plan.case.load.note)):
+        found = wrapped(f"NOTE of the {whose}  {text}", rest="  ") if text else []
+        if len(found) > NOTE_LINES:
+            found = [*found[: NOTE_LINES - 1], f"  ... (in full: lineplanner plan {typed(plan.case.name)})"]
+        lines += found
+    return lines
 
 
 def _before(plan: Plan, style: Style) -> Iterator[str]:
     case = plan.case
     drop = case.load.solution_drop if case.load.solution_drop is not None else case.tank.solution_drop
     soak = next((s.duration for s in lead_in(plan) if s.stage == "wait"), 0.0)
+    yield f"[ ] {bath_said(plan, style)}"
     if plan.start is not None and plan.start.preheat > 0.0:
         yield f"[ ] warm {style.show(plan.start.preheat, TIME)} in hot water"
     elif soak > 0.0:
         yield f"[ ] soak {style.show(soak, TIME)}, current off"
-    yield f"[ ] solution {style.show(drop, LENGTH)} below the bar"
-    yield "[ ] contacts tight, all parts hold"
+    yield f"[ ] solution {style.show(drop, LENGTH)} below bar"
+    yield "[ ] contacts tight, parts hold"
     if any(_plugged(part) for part in case.parts.values()):
-        yield "[ ] plugs and stop-off in place"
-    yield "[ ] exhaust running and proven"
-    yield "[ ] polarity as SET says"
+        yield "[ ] plugs, stop-off in"
+    yield "[ ] exhaust proven"
+    yield "[ ] polarity"
+
+
+def bath_said(plan: Plan, style: Style) -> str:
+    """The bath's temperature and the range that the recipe as filed allows: `bath 55 degC (54 to 57)`."""
+    filed = plan.filed.temperature
+    shown = f"bath {style.show(plan.case.bath.temperature, TEMPERATURE)}"
+    if filed is None:
+        return shown
+    low, high = (
+        None if edge is None else style.show(edge, TEMPERATURE).partition(" ")[0]
+        for edge in (filed.low, filed.high)
+    )
+    if low is not None and high is not None:
+        return f"{shown} ({low} to {high})"
+    if low is not None or high is not None:
+        return f"{shown} (at least {low})" if high is None else f"{shown} (at most {high})"
+    return f"{shown} (recipe {style.show(filed.value, TEMPERATURE)})"
 
 
 def _plugged(part: object) -> bool:
@@ -181,11 +213,11 @@ def _plugged(part: object) -> bool:
 
 
 def _after(plan: Plan, style: Style) -> Iterator[str]:
-    yield "current to zero before anyone touches rack or bar"
+    yield "zero amperes, then hands on rack or bar"
     if plan.recipe.after:
         yield ", ".join(step.name for step in plan.recipe.after)
     if _bakes(plan) and plan.recipe.oven_within is not None:
-        yield f"oven within {style.show(plan.recipe.oven_within, TIME, unit='h')}: oven by ______"
+        yield f"oven within {style.time_said(plan.recipe.oven_within)}: oven by ______"
 
 
 def _bakes(plan: Plan) -> bool:
@@ -203,56 +235,6 @@ def _areas(plan: Plan, style: Style) -> Iterator[str]:
         yield f"rack {surface_word(surface)} {style.show(wet, AREA)}, counts as {style.show(counted, AREA)}"
     for thief in areas.thieves:
         yield f"{thief.name} {style.show(thief.area, AREA)}, counts as {style.show(thief.carrying, AREA)}"
-
-
-def _rests(plan: Plan) -> str:
-    return f"This plan {rests_on(plan)}. Why: lineplanner plan {plan.case.name} --explain all"
-
-
-# --- cautions ---------------------------------------------------------------------------------------------
-
-
-def _cautions(plan: Plan, style: Style, room: int) -> tuple[list[str], int]:
-    """All cautions by moment, and how many of them in full: as many as there is room for, gravest first."""
-    ordered = sorted(plan.cautions, key=lambda c: c.order)
-    for count in range(len(ordered), -1, -1):
-        lines = _grouped(plan, {c.id for c in ordered[:count]}, style)
-        if len(lines) <= room:
-            return lines, count
-    return ([] if not ordered else _by_word(plan, ordered)), 0
-
-
-def _grouped(plan: Plan, full: set[str], style: Style) -> list[str]:
-    """Moment by moment; those not in full by word and id."""
-    lines = ["", _heading(plan, len(full))]
-    for when, new, again in by_moment(plan.cautions):
-        dangers = [c.id for c in again if c.word == "DANGER" and when in _OF_THE_RUN]
-        told = [c for c in new if c.id in full]
-        short = _ids([c for c in new if c.id not in full])
-        head = [f"again [DANGER] {', '.join(dangers)}"] if dangers else []
-        if not told and short:
-            head.append(short)
-        if told or head:
-            lines += wrapped(f"{when}: {'; '.join(head)}".rstrip(), first=" ", rest="    ")
-        for caution in told:
-            lines += caution_lines(caution, style, WIDTH, "  ")
-        lines += wrapped(short, first="  ", rest="    ") if told and short else []
-    return lines
-
-
-def _heading(plan: Plan, full: int) -> str:
-    rest = "" if full == len(plan.cautions) else f"  (in full: lineplanner plan {plan.case.name})"
-    return f"CAUTIONS  {len(plan.cautions)}{rest}"
-
-
-def _ids(cautions: list[Caution]) -> str:
-    by_word = {word: [c.id for c in cautions if c.word == word] for word in WORDS}
-    return "; ".join(f"[{word}] {', '.join(ids)}" for word, ids in by_word.items() if ids)
-
-
-def _by_word(plan: Plan, ordered: list[Caution]) -> list[str]:
-    """No room for moments: every caution still by word and id."""
-    return [_heading(plan, 0), *wrapped(_ids(ordered), first="  ", rest="    ")]
 
 
 # --- actuals ----------------------------------------------------------------------------------------------

@@ -4,7 +4,7 @@ from lineplanner.circuit import Element
 from lineplanner.findings import Finding, Level
 from lineplanner.plan import Plan
 from lineplanner.quantities import RESISTANCE, VOLTAGE
-from lineplanner.report.digits import is_lower_limit, use
+from lineplanner.report.digits import is_lower_limit, told_apart, use
 from lineplanner.report.layout import WIDTH, columns, shortened, wrapped
 from lineplanner.report.setpoints import fix_of, text_of
 from lineplanner.report.style import Style
@@ -12,7 +12,7 @@ from lineplanner.report.words.names import check_name, short_status
 
 # The fact that tells rows of one check apart.
 _OF = ("family", "part", "member", "role", "bar", "joint")
-NAME = 28  # characters of a name in the table
+NAME = 30  # characters of a name in the table
 _MARK = {Level.STOP: "STOP", Level.CAUTION: "CAUTION", Level.NOTE: "note", Level.OK: "ok"}
 
 
@@ -34,12 +34,13 @@ def _row(finding: Finding, style: Style, *, named: bool) -> tuple[str, ...]:
     assert finding.kind is not None
     assert finding.value is not None
     assert finding.limit is not None
-    least = "at least " if is_lower_limit(finding) else ""
+    least = ">= " if is_lower_limit(finding) else ""
     of = next((str(finding.facts[name]) for name in _OF if name in finding.facts), "") if named else ""
+    value, limit = told_apart(finding.value, finding.limit, finding.kind, style)
     return (
         shortened(f"{check_name(finding.check)} {of}".rstrip(), NAME),
-        style.show(finding.value, finding.kind),
-        least + style.show(finding.limit, finding.kind),
+        value,
+        least + limit,
         use(finding, style),
         _MARK[finding.level],
         short_status(finding.source.status.value),

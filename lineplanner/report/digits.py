@@ -2,6 +2,7 @@
 
 import math
 
+from lineplanner.errors import KindOfQuantity
 from lineplanner.findings import Finding
 from lineplanner.inputs.line import Rectifier
 from lineplanner.program.panel import panel_step
@@ -85,6 +86,34 @@ def moment(time: Time, process: str) -> str:
     seconds = math.floor(time + 0.5)
     text = f"{seconds // 3600}:{seconds // 60 % 60:02d}"
     return f"{text}:{seconds % 60:02d}" if seconds % 60 else text
+
+
+_FINE = 0.1  # a share below a tenth is compared to two digits, not to whole percents
+_MOST_DIGITS = 9  # beyond, two numbers differ by the noise of a conversion
+_DUST = 1e-9
+
+
+def told_apart(first: float, second: float, kind: KindOfQuantity, style: Style) -> tuple[str, str]:
+    """Two numbers that are compared: as usual, or to as many digits as it takes for them to differ.
+
+    >>> told_apart(0.0531, 0.05, RATIO, Style()), told_apart(0.0502, 0.05, RATIO, Style())
+    (('5.3 %', '5 %'), ('5.02 %', '5 %'))
+    """
+    fine = kind.name == RATIO.name and max(abs(first), abs(second)) < _FINE
+    texts = _pair(first, second, kind, style, 2 if fine else None)
+    if abs(first - second) <= _DUST * max(abs(first), abs(second)):
+        return texts
+    digits = max(sum(letter.isdigit() for letter in text.partition(" ")[0].lstrip("-0.")) for text in texts)
+    while texts[0] == texts[1] and digits < _MOST_DIGITS:
+        digits += 1
+        texts = _pair(first, second, kind, style, digits)
+    return texts
+
+
+def _pair(
+    first: float, second: float, kind: KindOfQuantity, style: Style, digits: int | None
+) -> tuple[str, str]:
+    return style.show(first, kind, digits=digits), style.show(second, kind, digits=digits)
 
 
 def is_lower_limit(finding: Finding) -> bool:

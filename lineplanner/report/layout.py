@@ -5,6 +5,8 @@ import textwrap
 from collections.abc import Iterable, Sequence
 
 WIDTH = 76
+TERMINAL = 80  # columns of the narrowest terminal: no table is wider
+_LEAST = 12  # letters that a name keeps
 
 
 def wrapped(text: str, width: int = WIDTH, *, first: str = "", rest: str | None = None) -> list[str]:
@@ -23,7 +25,7 @@ def wrapped(text: str, width: int = WIDTH, *, first: str = "", rest: str | None 
 
 
 _GLUE = "\N{NO-BREAK SPACE}"
-_TOGETHER = re.compile(r"(?<=\d) (?=[^\W\d]|%)|(?<=\[) (?=\])")
+_TOGETHER = re.compile(r"(?<=\d) (?=[^\W\d]|%)|(?<=\[) (?=\])|(?<=\[ \]) ")
 
 
 def _glued(text: str) -> str:
@@ -40,8 +42,31 @@ def shortened(text: str, width: int) -> str:
     return textwrap.shorten(_glued(text), max(width, 5), placeholder=" ...").replace(_GLUE, " ")
 
 
+def squeezed(text: str, width: int) -> str:
+    """A name cut in its middle where it is too long: beginnings and ends tell names apart.
+
+    >>> squeezed("grip-rail hole[2] wall", 16)
+    'grip-ra..2] wall'
+    """
+    if len(text) <= width:
+        return text
+    tail = (width - 2) // 2
+    return f"{text[: width - 2 - tail]}..{text[-tail:]}"
+
+
+def typed(word: str) -> str:
+    """A word as a person types it into a command line: in quotes where it has blanks or signs.
+
+    >>> typed("lug-mix"), typed("my shop")
+    ('lug-mix', '"my shop"')
+    """
+    return word if re.fullmatch(r"[\w./\\:~+-]+", word) else f'"{word}"'
+
+
 def columns(rows: Iterable[Sequence[str]], *, right: Iterable[int] = (), indent: str = "  ") -> list[str]:
     """Rows as columns, two blanks apart; those in `right` flush right.
+
+    Where a row would be wider than a terminal, the names of the first column are cut in their middle.
 
     >>> columns([("hold", "36.5"), ("ramp", "5")], right=(1,))
     ['  hold  36.5', '  ramp     5']
@@ -52,6 +77,10 @@ def columns(rows: Iterable[Sequence[str]], *, right: Iterable[int] = (), indent:
     count = max(len(row) for row in listed)
     filled = [(*row, *[""] * (count - len(row))) for row in listed]
     widths = [max(len(row[place]) for row in filled) for place in range(count)]
+    over = len(indent) + sum(widths) + 2 * (count - 1) - TERMINAL
+    if over > 0:
+        widths[0] = min(widths[0], max(_LEAST, widths[0] - over))
+        filled = [(squeezed(row[0], widths[0]), *row[1:]) for row in filled]
     flush = frozenset(right)
     return [
         indent

@@ -1,10 +1,12 @@
 """A plan as text: what to set, whether it may run, what can hurt, then why."""
 
 from lineplanner.findings import Level
+from lineplanner.inputs.approval import content_hash
+from lineplanner.inputs.recipe import Recipe
 from lineplanner.plan import Plan
-from lineplanner.quantities import TIME
 from lineplanner.report.cautions_text import cautions_in_full
 from lineplanner.report.checks_text import checks_lines, circuit_lines, others_lines, said
+from lineplanner.report.digits import told_apart
 from lineplanner.report.explain import rests_on
 from lineplanner.report.layout import wrapped
 from lineplanner.report.plan_id import plan_id
@@ -14,6 +16,7 @@ from lineplanner.report.style import Style
 from lineplanner.report.words.names import number_of, process_name
 
 DRAFT = "DRAFT RECIPE"
+CHANGED = "(changed since it was approved)"
 LAST_LINE = "Planning estimate; safety data sheet, local codes, qualified people decide."
 
 
@@ -37,7 +40,7 @@ def plan_text(plan: Plan, style: Style) -> str:
     }
     for title, part in parts.items():
         lines += ["", title, *part] if part else []
-    lines += ["", f"plan {plan_id(plan)}, {rests_on(plan)}", LAST_LINE]
+    lines += ["", *wrapped(f"plan {plan_id(plan)}, {rests_on(plan)}", rest="  "), LAST_LINE]
     return "\n".join(lines)
 
 
@@ -54,18 +57,32 @@ def heading_lines(plan: Plan, style: Style) -> list[str]:
 
 def recipe_said(plan: Plan) -> str:
     """Name, revision, status, and how many deviations."""
-    status = "approved" if plan.status == "approved" else DRAFT
     counted = f", {number_of(len(plan.deviations), 'deviation')}" if plan.deviations else ""
-    return f"{plan.filed.name} rev {plan.filed.revision} {status}{counted}"
+    return f"{plan.filed.name} rev {plan.filed.revision} {status_said(plan)}{counted}"
+
+
+def status_said(plan: Plan) -> str:
+    """The status of the recipe: a changed one was approved with other values than it has now."""
+    if plan.status == "approved":
+        return "approved"
+    return f"{DRAFT} {CHANGED}" if changed_since_approval(plan.filed) else DRAFT
+
+
+def changed_since_approval(recipe: Recipe) -> bool:
+    """Whether a recipe that is filed as approved has other values than those that were approved."""
+    content = recipe.approved_content
+    return recipe.status == "approved" and content != "" and content != content_hash(recipe)
 
 
 def deviation_lines(plan: Plan, style: Style) -> list[str]:
     """Each setting that the load runs otherwise than its recipe says, with who changed it."""
     lines: list[str] = []
     for one in plan.deviations:
-        said = "left to the tables" if one.recipe is None else style.show(one.recipe, one.kind)
+        here, filed = style.show(one.load, one.kind), "left to the tables"
+        if one.recipe is not None:
+            here, filed = told_apart(one.load, one.recipe, one.kind, style)
         where = "inside the range" if one.inside_range else "OUTSIDE THE RANGE"
-        text = f"deviation: {one.label} {style.show(one.load, one.kind)}, recipe {said}: {where}"
+        text = f"deviation: {one.label} {here}, recipe {filed}: {where}"
         lines += wrapped(text, first="  ", rest="    ")
     change = plan.case.load.change
     if plan.deviations and change is not None and change.why:
@@ -80,7 +97,7 @@ def steps_lines(plan: Plan, style: Style) -> list[str]:
         said = []
         for step in steps:
             tank = f" ({step.tank})" if step.tank else ""
-            time = f" {style.show(step.time, TIME)}" if step.time else ""
+            time = f" {style.time_said(step.time)}" if step.time else ""
             said.append(f"{step.name}{tank}{time}")
         lines += wrapped(f"{when}: {'; '.join(said)}", first="  ", rest="    ") if said else []
     for whose, text in (("recipe", plan.recipe.note), ("load", plan.case.load.note)):

@@ -2,12 +2,12 @@
 
 from collections.abc import Iterable, Iterator
 
-from lineplanner.load import Metal
+from lineplanner.load import Item, Metal
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Run
-from lineplanner.quantities import AREA, MASS, RATE, RATIO, THICKNESS
+from lineplanner.quantities import AREA, MASS, RATE, RATIO, THICKNESS, Area
 from lineplanner.report.digits import CHROME, amperes, charge, duration, hours, moment, volts
-from lineplanner.report.layout import columns, shortened, wrapped
+from lineplanner.report.layout import columns, shortened, squeezed, wrapped
 from lineplanner.report.plan_json import COVERAGE
 from lineplanner.report.setpoints import rectifier_of
 from lineplanner.report.style import Style
@@ -15,6 +15,7 @@ from lineplanner.report.words.names import work
 from lineplanner.report.words.reasons import surface_word
 
 NAME = 30  # characters of a name in a table
+NOT_CHECKED = "not checked by this version: fit, gaps between parts, tank depth"
 
 
 def program_lines(plan: Plan, style: Style) -> list[str]:
@@ -42,8 +43,8 @@ def program_lines(plan: Plan, style: Style) -> list[str]:
                 moment(stage.start, process),
                 moment(stage.end, process),
                 lasts or duration(stage.duration, style),
-                first if first == last else f"{first.partition(' ')[0]} to {last}",
-                low if low == high else f"{low.partition(' ')[0]} to {high}",
+                _span(first, last),
+                _span(low, high),
                 charge(counted, style),
                 work(stage.polarity),
             )
@@ -51,6 +52,12 @@ def program_lines(plan: Plan, style: Style) -> list[str]:
     lines = columns(rows, right=(1, 2, 3, 4, 5, 6))
     lines += [f"  {text}" for text in _control_notes(plan, run)]
     return lines
+
+
+def _span(first: str, last: str) -> str:
+    """Two ends of one figure; its unit stands in the heading."""
+    numbers = dict.fromkeys(text.partition(" ")[0] for text in (first, last))
+    return " to ".join(numbers)
 
 
 def _control_notes(plan: Plan, run: Run) -> Iterator[str]:
@@ -119,24 +126,39 @@ def outcome_lines(plan: Plan, style: Style) -> list[str]:
 def areas_lines(plan: Plan, style: Style) -> list[str]:
     """Item by item, what of the rack is counted, and the three sums."""
     areas = plan.areas
-    rows: list[tuple[str, ...]] = [("", "count", "each wet", "wet", "carrying", "significant")]
-    rows += [
-        (
-            shortened(i.name, NAME),
-            str(i.count),
-            *(style.show(a, AREA) for a in (i.wet_each, i.wet, i.carrying, i.significant)),
-        )
-        for i in areas.items
-    ]
+    heads = ("each wet", "wet", "carrying", "significant")
+    rows: list[tuple[str, ...]] = [(f"in {area_unit(style)}", "count", *heads)]
+    for item, name in zip(areas.items, item_names(areas.items), strict=True):
+        wanted = (item.wet_each, item.wet, item.carrying, item.significant)
+        rows.append((squeezed(name, NAME), str(item.count), *(area_number(a, style) for a in wanted)))
     for metals in alike((*areas.rack, *areas.thieves)):
         name = metals[0].name + (f" to {metals[-1].name}" if len(metals) > 1 else "")
         wet, carrying = sum(m.area for m in metals), sum(m.carrying for m in metals)
-        each, shown = style.show(metals[0].area, AREA), (style.show(wet, AREA), style.show(carrying, AREA))
+        each, *shown = (area_number(a, style) for a in (metals[0].area, wet, carrying))
         name = shortened(f"{name} ({surface_word(metals[0].why)})", NAME)
         rows.append((name, str(len(metals)), each, *shown, ""))
-    sums = (style.show(a, AREA) for a in (areas.wet, areas.carrying, areas.significant))
+    sums = (area_number(a, style) for a in (areas.wet, areas.carrying, areas.significant))
     rows.append(("together", "", "", *sums))
-    return columns(rows, right=(1, 2, 3, 4, 5))
+    return [*columns(rows, right=(1, 2, 3, 4, 5)), f"  {NOT_CHECKED}"]
+
+
+def area_unit(style: Style) -> str:
+    """The unit that all areas of a table are in: it stands in the heading."""
+    return style.show(1.0, AREA).partition(" ")[2]
+
+
+def area_number(area: Area, style: Style) -> str:
+    """An area of a table, without its unit."""
+    return style.show(area, AREA).partition(" ")[0]
+
+
+def item_names(items: Iterable[Item]) -> list[str]:
+    """The parts by name; two of one name with the material that tells them apart."""
+    listed = list(items)
+    names = [item.name for item in listed]
+    return [
+        item.name if names.count(item.name) == 1 else f"{item.name}, {item.material.name}" for item in listed
+    ]
 
 
 def alike(metals: Iterable[Metal]) -> list[list[Metal]]:

@@ -9,14 +9,16 @@ from lineplanner.inputs.cautions import Moment
 from lineplanner.inputs.line import Rectifier
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Run, Stage
-from lineplanner.quantities import AREA, CURRENT_DENSITY
+from lineplanner.quantities import AREA, CURRENT_DENSITY, Voltage
 from lineplanner.report.digits import (
     CHROME,
+    NONE,
     amperes,
     charge,
     duration,
     is_lower_limit,
     run_time_said,
+    told_apart,
     use,
     volts,
 )
@@ -136,11 +138,18 @@ def _expected(plan: Plan, run: Run, style: Style) -> Iterator[str]:
 
 
 def expected_volts(run: Run, style: Style) -> str:
-    """The volts to expect, from the start of full current to the end."""
+    """The volts to expect, from the start of full current to the end, and those of a stage that takes more."""
     start, end = volts(run.start_voltage, style), volts(run.end_voltage, style)
-    if start == end:
-        return f"expect {end}"
-    return f"expect {start.partition(' ')[0]} to {end}"
+    text = f"expect {end}" if start == end else f"expect {start.partition(' ')[0]} to {end}"
+    highest = max(run.stages, key=_highest, default=None)
+    if highest is None or _highest(highest) <= max(run.start_voltage or 0.0, run.end_voltage or 0.0):
+        return text
+    peak = volts(_highest(highest), style)
+    return text if peak in (start, end) else f"{text}, {highest.stage} {peak}"
+
+
+def _highest(stage: Stage) -> Voltage:
+    return max(stage.from_voltage, stage.to_voltage)
 
 
 # --- verdict ---------------------------------------------------------------------------------------------
@@ -173,9 +182,11 @@ def _verdict(plan: Plan, style: Style) -> str:
     notes = sum(f.level is Level.NOTE for f in plan.findings)
     if level in (Level.STOP, Level.CAUTION):
         grave = [f for f in plan.findings if f.level is level]
-        text = in_words(grave[0], style)
-        if len(grave) > 1:
-            text += f"; {number_of(len(grave) - 1, f'more {level.value}')}"
+        text, left = in_words(grave[0], style), len(grave) - 1
+        second = next((f for f in grave[1:] if use(f, style) == NONE), None)
+        if second is not None:
+            text, left = f"{text}; also: {text_of(second, style)}", left - 1
+        text += f"; {number_of(left, f'more {level.value}')}" if left else ""
         if level is Level.STOP:
             cautions = sum(f.level is Level.CAUTION for f in plan.findings)
             text += f"; {number_of(cautions, 'caution')}" if cautions else ""
@@ -190,7 +201,7 @@ _INSIDE = ("band-minimum", "band-maximum")
 
 def _tightest(plan: Plan, style: Style) -> str:
     compared = [
-        f for f in plan.findings if f.level is Level.OK and f.margin is not None and use(f, style) != "-"
+        f for f in plan.findings if f.level is Level.OK and f.margin is not None and use(f, style) != NONE
     ]
     first = plan.binding
     if first is None or not compared:
@@ -203,14 +214,34 @@ def _tightest(plan: Plan, style: Style) -> str:
 def in_words(finding: Finding, style: Style) -> str:
     """A finding in a few words: `contacts 71 % of their limit`, else its sentence."""
     share, name = use(finding, style), check_name(finding.check)
-    if share == "-" or (finding.margin is not None and finding.value == finding.limit):
+    if share == NONE or (finding.margin is not None and finding.value == finding.limit):
         return text_of(finding, style)
     return f"{name} {share} of {its(name)} {'least' if is_lower_limit(finding) else 'limit'}"
 
 
 def text_of(finding: Finding, style: Style) -> str:
     """The sentence of a finding, its value and limit among the facts."""
-    return sentence(finding.key, facts_of(finding), style)
+    return sentence(finding.key, _told(finding, style), style)
+
+
+# Facts of a sentence that stand against each other.
+_COMPARED = (
+    ("value", "limit"),
+    ("here", "filed"),
+    ("stated", "drawn"),
+    ("bath", "recipe"),
+    ("density", "recipe"),
+)
+
+
+def _told(finding: Finding, style: Style) -> Facts:
+    """The facts of a finding; two that are compared are never printed alike while they differ."""
+    facts = dict(facts_of(finding))
+    for names in _COMPARED:
+        first, second = (facts.get(name) for name in names)
+        if isinstance(first, Quantity) and isinstance(second, Quantity) and first.kind == second.kind:
+            facts |= zip(names, told_apart(first.value, second.value, first.kind, style), strict=True)
+    return facts
 
 
 def facts_of(finding: Finding) -> Facts:
@@ -224,7 +255,7 @@ def facts_of(finding: Finding) -> Facts:
 
 def fix_of(finding: Finding, style: Style) -> str:
     """The way out of a finding, if it has one."""
-    return "" if finding.fix is None else sentence(finding.fix, facts_of(finding), style)
+    return "" if finding.fix is None else sentence(finding.fix, _told(finding, style), style)
 
 
 # --- caution ---------------------------------------------------------------------------------------------
@@ -233,6 +264,12 @@ def fix_of(finding: Finding, style: Style) -> str:
 def caution_text(caution: Caution, style: Style) -> str:
     """The words of a caution with its values filled in."""
     return caution.text.format_map({name: style.fact(fact) for name, fact in caution.facts.items()})
+
+
+def caution_short(caution: Caution, plan: Plan, style: Style) -> str:
+    """What to do, in the few words that the site has for a caution."""
+    short = next((text.short for text in plan.case.cautions.cautions if text.id == caution.id), caution.id)
+    return short.format_map({name: style.fact(fact) for name, fact in caution.facts.items()})
 
 
 def caution_line(plan: Plan, style: Style, moment: Moment | None = None, width: int = WIDTH) -> str:

@@ -14,12 +14,25 @@ from lineplanner.inputs.adoption import with_adopted
 from lineplanner.inputs.declared import declared
 from lineplanner.inputs.tables import ConductivityTable, Limits
 from lineplanner.inputs.values import Sourced
-from lineplanner.quantities import CONDUCTIVITY, RATIO, Kind
+from lineplanner.quantities import (
+    CONDUCTIVITY,
+    KINDS,
+    LENGTH,
+    RATIO,
+    STRESS,
+    TEMPERATURE,
+    TEMPERATURE_DIFFERENCE,
+    Kind,
+)
 from lineplanner.report.layout import wrapped
 from lineplanner.report.style import Style
 from lineplanner.sources import Constant
 
 # Rooms above the engine hold no constants of the trade.
+_PHYSICAL = "lineplanner/quantities.py"  # printed in SI, as their source defines them
+_DIGITS = 6  # of a constant
+_LARGEST_DIFFERENCE = 200.0  # K; no bath is colder, and nothing here warms by as much
+_MEANT = {LENGTH.unit: LENGTH, STRESS.unit: STRESS}  # of several kinds of one unit, the one a constant means
 _SHELLS = frozenset({"__main__", "cli", "tui", "log", "files", "units"})
 
 
@@ -37,9 +50,9 @@ class Listed:
 
 
 def listed(library: Library) -> Iterator[Listed]:
-    """All of them: the constants by module, then the tables of the site by file."""
-    yield from _constants()
+    """All of them: the tables of the site by file, which a shop can change, then the constants by module."""
     yield from _tables(library)
+    yield from _constants()
 
 
 def _constants() -> Iterator[Listed]:
@@ -60,10 +73,18 @@ def _constants() -> Iterator[Listed]:
                         name=one.name,
                         value=one.value,
                         unit=one.unit,
-                        kind=None,
+                        kind=None if file == _PHYSICAL else _kind_of(one),
                         status=one.source.status.value,
                         source=one.source.title,
                     )
+
+
+def _kind_of(constant: Constant) -> Kind | None:
+    """The kind that a constant's unit belongs to, if it is that of no other; of kelvins by their number."""
+    if constant.unit == TEMPERATURE.unit:
+        return TEMPERATURE if constant.value > _LARGEST_DIFFERENCE else TEMPERATURE_DIFFERENCE
+    found = [kind for kind in KINDS.values() if kind.unit == constant.unit]
+    return _MEANT.get(constant.unit, found[0] if len(found) == 1 else None)
 
 
 def _constants_in(value: object) -> Iterator[Constant]:
@@ -141,11 +162,18 @@ def sources_text(library: Library, style: Style) -> str:
         if one.file != file:
             lines += ["", one.file] if lines else [one.file]
             file = one.file
-        shown = f"{one.value:.9g} {one.unit}" if one.kind is None else style.show(one.value, one.kind)
+        shown = _shown(one, style)
         lines += wrapped(
             f"{one.name}: {shown.removesuffix(' 1')}  [{one.status}] {one.source}", first="  ", rest="    "
         )
     return "\n".join(lines)
+
+
+def _shown(one: Listed, style: Style) -> str:
+    """A value in the user's units; where the unit is no kind of the engine's, as the source has it."""
+    if one.kind is None:
+        return f"{one.value:.9g} {one.unit}"
+    return style.show(one.value, one.kind, digits=_DIGITS if one.file.endswith(".py") else None)
 
 
 def source_records(library: Library) -> list[dict[str, Any]]:

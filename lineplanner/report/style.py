@@ -5,9 +5,10 @@ from dataclasses import dataclass
 
 from lineplanner import units
 from lineplanner.errors import Fact, KindOfQuantity, Quantity
-from lineplanner.quantities import KINDS
+from lineplanner.quantities import KINDS, TIME, Time
 from lineplanner.units import System
 
+LONG = 7200.0  # s; from here a time in a sentence is said in hours
 # A difference of temperature reads like a temperature; units tells them apart only to read them back.
 _PLAIN: Mapping[str, str] = {"delta_degF": "degF", "delta_degC": "degC"}
 _SIGNS: Mapping[str, str] = {
@@ -73,9 +74,19 @@ class Style:
 
     def fact(self, fact: Fact) -> str:
         """A fact of a message: a quantity shown, words as they are."""
-        if isinstance(fact, Quantity):
-            return self.show(fact.value, fact.kind)
-        return str(fact)
+        if not isinstance(fact, Quantity):
+            return str(fact)
+        if fact.kind.name == TIME.name:
+            return self.time_said(fact.value)
+        return self.show(fact.value, fact.kind)
+
+    def time_said(self, time: Time) -> str:
+        """A time in a sentence: from two hours on in hours.
+
+        >>> Style().time_said(7140.0), Style().time_said(19_560.0)
+        ('119 min', '5.43 h')
+        """
+        return self.show(time, TIME, unit="h" if time >= LONG else None)
 
 
 def signed(unit: str) -> str:

@@ -63,12 +63,11 @@ def _named(share: Ratio, stage: Stage) -> str:
 def _at(run: Run, stage: Stage, time: Time, name: str) -> Moment:
     """A moment inside a stage: its current runs straight between its ends, by the stage's own definition."""
     share = (time - stage.start) / stage.duration if stage.duration > 0.0 else 1.0
-    current = stage.from_current + share * (stage.to_current - stage.from_current)
     passed = sum(s.charge for s in run.stages if s.end <= stage.start)
     return Moment(
         name=name,
         time=time,
-        current=current,
+        current=stage.current_at(time),
         voltage=stage.from_voltage + share * (stage.to_voltage - stage.from_voltage),
-        counter=passed + 0.5 * (stage.from_current + current) * (time - stage.start),
+        counter=passed + stage.charge_until(time),
     )

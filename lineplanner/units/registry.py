@@ -1,5 +1,6 @@
 """The unit library, loaded at first use: how a unit converts to the SI unit of a kind."""
 
+import math
 import re
 from functools import cache
 from typing import TYPE_CHECKING, Any, NamedTuple
@@ -78,14 +79,17 @@ def _of_temperature(unit: Unit) -> Conversion:
     return Conversion(_factor(f"delta_{scale}", "kelvin"), zero, 0.0)
 
 
-_DIGITS = 15  # significant digits of a factor: what is behind them is dust of the multiplication
+_SHORT = 12  # significant digits: a factor that has no more is a short decimal
+_DUST = 4  # last bits that a product of powers may be off
 
 
 def _factor(source: str, target: str) -> float:
-    """The factor between two units, so rounded that 1 A/dm2 is 100 A/m2 and not a last bit less."""
+    """The factor between two units; 1 A/dm2 is 100 A/m2 and not a last bit less."""
     import pint
 
     try:
-        return float(f"{registry().convert(1.0, source, target):.{_DIGITS}g}")
+        found = float(registry().convert(1.0, source, target))
+        short = float(f"{found:.{_SHORT}g}")
+        return short if abs(short - found) <= _DUST * math.ulp(found) else found
     except pint.DimensionalityError:
         raise Refusal("unit.wrong_kind") from None

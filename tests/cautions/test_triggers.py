@@ -415,9 +415,13 @@ def test_a_value_that_is_not_known_is_said_to_be_not_known(unknown: Make) -> Non
         ("cr6-size-large", "potential_charge"),
         ("cr6-waste", "chromium_mass"),
         ("makeup-air", "air_shortfall"),
-        ("he-bake", "bake_within"),
     ]:
         assert applied[id_].facts[name] == "not known"
+    bake = applied["he-bake"]
+    assert (bake.facts["bake_within"], bake.facts["bake_rule"]) == (
+        "the rule's delay",
+        "a rule still to be named",
+    )
 
 
 def test_every_kind_of_step_that_a_recipe_can_name_has_contents() -> None:

@@ -138,6 +138,11 @@ def test_areas_are_printed_for_a_part_a_rack_and_a_load(run: Run) -> None:
     assert (done.returncode, done.stdout) == (2, "")
 
 
+def test_sources_follow_the_units_asked_for(run: Run) -> None:
+    assert "coolest bake of the chart: 374 °F " in run("sources", "--units", "us").stdout
+    assert "coolest bake of the chart: 190 °C " in run("sources", "--units", "metric").stdout
+
+
 def test_sources_are_listed(run: Run) -> None:
     done = run("sources")
     assert (done.returncode, done.stderr) == (0, "")
@@ -189,6 +194,45 @@ def test_check_without_a_file_says_what_it_needs(run: Run) -> None:
     assert done.stderr == "lineplanner: no file is named. Name one or more files, or `--schema KIND`\n"
 
 
+def test_a_recipe_changed_since_its_approval_is_no_problem_and_is_told(run: Run, tmp_path: Path) -> None:
+    run("start", "shop")
+    recipe = tmp_path / "shop" / "configs" / "recipes" / "type-ii-clear.toml"
+    recipe.write_text(recipe.read_text(encoding="utf-8") + '\n[[after]]\nname = "wipe"\n', encoding="utf-8")
+    done = run("check", "shop/configs/recipes")
+    assert (done.returncode, done.stdout) == (0, "")
+    assert done.stderr.splitlines()[0] == (
+        f"lineplanner: {Path('shop/configs/recipes/type-ii-clear.toml')}: changed since process engineer approved "
+        "it, so it counts as a draft. Approve it again: "
+        "`lineplanner approve shop/configs/recipes/type-ii-clear.toml --by NAME`"
+    )
+    assert "0 problem(s)" in done.stderr.splitlines()[-1]
+    heading = " ".join(run("plan", "vent-panels-24", "--site", "shop").stdout.split()[:40])
+    assert "DRAFT RECIPE (changed since it was approved)" in heading
+
+
+@pytest.mark.parametrize(
+    ("file", "kind"),
+    [
+        ("shop/rack_library/parts/new.toml", "part"),
+        ("shop/configs/recipes/new.toml", "recipe"),
+        ("shop/configs/site.toml", "site"),
+        ("shop/configs/standards/new.toml", "KIND"),
+        ("new.toml", "KIND"),
+    ],
+)
+def test_an_empty_file_is_told_the_first_line_of_its_folder(
+    run: Run, tmp_path: Path, file: str, kind: str
+) -> None:
+    run("start", "shop")
+    (tmp_path / file).write_text("\n", encoding="utf-8")
+    done = run("check", file)
+    assert done.returncode == 2
+    assert done.stdout == (
+        f"{Path(file)}: has no format line. Begin the file with a line such as "
+        f'`format = "lineplanner {kind} 1"`\n'
+    )
+
+
 def test_a_schema_is_printed_and_an_unknown_kind_lists_the_kinds(run: Run) -> None:
     assert json.loads(run("check", "--schema", "part").stdout)["title"] == "lineplanner part 1"
     done = run("check", "--schema", "nut")
@@ -204,6 +248,19 @@ def test_a_site_is_started_and_its_loads_run(run: Run) -> None:
     again = run("start", "shop")
     assert again.returncode == 2
     assert "holds configs already, and is left as it is" in again.stderr
+
+
+def test_a_site_is_started_in_a_folder_that_is_named(run: Run, tmp_path: Path) -> None:
+    for nothing in ("", " "):
+        done = run("start", nothing)
+        assert (done.returncode, done.stdout) == (2, "")
+        said = "lineplanner: no folder is named. Name an empty or a new one: `lineplanner start DIR`\n"
+        assert done.stderr == said
+    assert list(tmp_path.iterdir()) == []
+
+
+def test_a_command_to_type_has_quotes_round_a_folder_with_blanks(run: Run) -> None:
+    assert run("start", "our shop").stdout.endswith('Begin with `lineplanner --site "our shop"`\n')
 
 
 def test_a_site_that_is_none_exits_with_2(run: Run) -> None:
@@ -237,7 +294,7 @@ def test_a_wrong_command_line_exits_with_2_and_says_where_help_is(
 def test_help_names_every_command(run: Run) -> None:
     done = run("--help")
     assert (done.returncode, done.stderr) == (0, "")
-    for command in ("plan", "card", "area", "check", "sources", "start"):
+    for command in ("plan", "card", "area", "check", "sources", "start", "approve"):
         assert re.search(rf"^  {command} ", done.stdout, re.MULTILINE)
     assert run("plan", "--help").returncode == 0
 

@@ -63,6 +63,29 @@ def test_a_reader_that_goes_away_ends_the_command_quietly(tmp_path: Path) -> Non
     assert process.wait() == 0
 
 
+FULL = Path("/dev/full")  # a device that takes nothing, as a full disk does
+
+
+@pytest.mark.skipif(not FULL.exists(), reason="this system has no device that is always full")
+@pytest.mark.parametrize("command", ["plan valve-blocks-24", "card rod-40x900", "sources", "--help"])
+def test_an_output_that_cannot_be_written_exits_with_2_and_says_so(tmp_path: Path, command: str) -> None:
+    with FULL.open("w", encoding="utf-8") as full:
+        done = subprocess.run(
+            [sys.executable, "-m", "lineplanner", *command.split()],
+            cwd=tmp_path,
+            env={**os.environ, "PYTHONPATH": str(CHECKOUT), "XDG_DATA_HOME": str(tmp_path)},
+            stdout=full,
+            stderr=subprocess.PIPE,
+            encoding="utf-8",
+            check=False,
+        )
+    assert done.returncode == 2
+    assert done.stderr == (
+        "lineplanner: the output cannot be written: No space left on device. What was printed is not whole\n"
+    )
+    assert not list(tmp_path.rglob("fault-*.txt"))
+
+
 BROKEN = """
 import sys
 import lineplanner.plan

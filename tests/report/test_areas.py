@@ -69,10 +69,10 @@ def test_a_plate_of_known_size_has_its_area(library: Library, tmp_path: Path) ->
         "  carrying        1.06 dm2",
         "  significant     1.06 dm2",
         "",
-        "  face   count     drawn  factor       wet  carrying  significant",
-        "  front      1   0.5 dm2   100 %   0.5 dm2   0.5 dm2      0.5 dm2",
-        "  back       1   0.5 dm2   100 %   0.5 dm2   0.5 dm2      0.5 dm2",
-        "  edge       1  0.06 dm2   100 %  0.06 dm2  0.06 dm2     0.06 dm2",
+        "  face, in dm2  count  drawn  factor   wet  carrying  significant",
+        "  front             1    0.5   100 %   0.5       0.5          0.5",
+        "  back              1    0.5   100 %   0.5       0.5          0.5",
+        "  edge              1   0.06   100 %  0.06      0.06         0.06",
     ]
 
 

@@ -11,11 +11,12 @@ from pathlib import Path
 
 import pytest
 
+from lineplanner.inputs.values import Ranged
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Stage
-from lineplanner.report.card import LINES, RAMP_ROWS, card_lines, card_text, ramp_rows
+from lineplanner.report.card import LINES, RAMP_ROWS, bath_said, card_lines, card_text, ramp_rows
 from lineplanner.report.layout import WIDTH
-from lineplanner.report.setpoints import caution_text
+from lineplanner.report.setpoints import caution_short, caution_text
 from lineplanner.report.style import Style
 from lineplanner.report.watch import moments
 
@@ -57,13 +58,24 @@ def test_every_danger_of_a_demo_load_is_on_its_card_in_full(each_load: Plan, sty
             assert f"[DANGER] {joined([caution_text(caution, style)])}" in text
 
 
-def test_every_caution_is_on_the_card_with_its_word(each_load: Plan) -> None:
-    lines = card_lines(each_load, METRIC)
-    text = joined(lines)
+def test_every_caution_is_on_the_card_with_its_word(each_load: Plan, style: Style) -> None:
+    text = joined(card_lines(each_load, style))
     for caution in each_load.cautions:
-        in_full = f"[{caution.word}] {joined([caution_text(caution, METRIC)])}" in text
-        named = re.search(rf"\[{caution.word}\] (?:[\w-]+, )*{caution.id}\b", text)
+        in_full = f"[{caution.word}] {joined([caution_text(caution, style)])}" in text
+        phrase = re.escape(caution_short(caution, each_load, style))
+        named = re.search(rf"\[{caution.word}\] (?:[^\[\]]+; )?{phrase}", text)
         assert in_full or named, caution.id
+
+
+def test_no_caution_is_named_by_its_id(each_load: Plan, with_a_stop: Callable[[Plan], Plan]) -> None:
+    for made in (each_load, with_a_stop(each_load)):
+        text = joined(card_lines(made, METRIC))
+        ids = [c.id for c in made.cautions if "-" in c.id]
+        assert [one for one in ids if re.search(rf"(?<![\w-]){one}(?![\w-])", text)] == []
+
+
+def test_a_card_with_shortened_cautions_says_where_they_are_in_full(each_load: Plan) -> None:
+    text = joined(card_lines(each_load, METRIC))
     if any(f"[{c.word}] {joined([caution_text(c, METRIC)])}" not in text for c in each_load.cautions):
         assert f"(in full: lineplanner plan {each_load.case.name})" in text
 
@@ -73,8 +85,81 @@ def test_dangers_are_named_even_where_there_is_no_room_at_all(demo: Demo) -> Non
     note = "x" * 70
     change = replace(made.case.load, hangs=made.case.load.hangs * 40, note=note)
     text = joined(card_lines(replace(made, case=replace(made.case, load=change)), METRIC))
-    dangers = [c.id for c in made.cautions if c.word == "DANGER"]
-    assert f"[DANGER] {', '.join(dangers)}" in text
+    dangers = [caution_short(c, made, METRIC) for c in made.cautions if c.word == "DANGER"]
+    assert f"[DANGER] {'; '.join(dangers)}" in text
+
+
+# --- bath, notes, outage, what is not checked -------------------------------------------------------------
+
+
+@pytest.mark.parametrize(
+    ("bath", "low", "high", "said"),
+    [
+        (328.15, 327.15, 330.15, "bath 55 degC (54 to 57)"),
+        (328.15, None, None, "bath 55 degC (recipe 56 degC)"),
+        (328.15, 327.15, None, "bath 55 degC (at least 54)"),
+        (328.15, None, 330.15, "bath 55 degC (at most 57)"),
+    ],
+)
+def test_the_bath_is_told_with_the_range_of_the_recipe(
+    demo: Demo, bath: float, low: float | None, high: float | None, said: str
+) -> None:
+    made = demo("rod-40x900")
+    case = replace(made.case, bath=replace(made.case.bath, temperature=bath))
+    filed = replace(made.filed, temperature=Ranged(value=329.15, low=low, high=high))
+    assert bath_said(replace(made, case=case, filed=filed), METRIC) == said
+    assert (
+        bath_said(replace(made, case=case, filed=replace(made.filed, temperature=None)), METRIC)
+        == "bath 55 degC"
+    )
+
+
+def test_the_bath_stands_first_before_current(each_load: Plan) -> None:
+    if not each_load.stopped:
+        assert re.search(
+            r"BEFORE CURRENT \[ \] bath -?[\d.]+ degC \(-?[\d.]+ to -?[\d.]+\);",
+            joined(card_lines(each_load, METRIC)),
+        )
+
+
+def test_the_notes_of_recipe_and_load_are_on_the_card(demo: Demo) -> None:
+    made = demo("guide-pins-flash")
+    load = replace(made.case.load, note="Second lot of three.")
+    text = joined(card_lines(replace(made, case=replace(made.case, load=load)), METRIC))
+    assert f"NOTE of the recipe {made.recipe.note}" in text
+    assert "NOTE of the load Second lot of three." in text
+
+
+def test_a_note_that_is_too_long_says_where_it_is_whole(demo: Demo) -> None:
+    made = demo("valve-blocks-24")
+    long = replace(made.case.load, note="word " * 100)
+    lines = card_lines(replace(made, case=replace(made.case, load=long)), METRIC)
+    assert "  ... (in full: lineplanner plan valve-blocks-24)" in lines
+    assert len(lines) <= LINES
+
+
+def test_a_stopped_card_has_no_list_to_tick(each_load: Plan, with_a_stop: Callable[[Plan], Plan]) -> None:
+    text = joined(card_lines(with_a_stop(each_load), METRIC))
+    assert "[ ]" not in text
+    assert "BEFORE CURRENT the current stays off: a stop forbids this plan" in text
+
+
+def test_a_hard_chrome_card_says_what_an_outage_asks_for(each_load: Plan) -> None:
+    text = joined(card_lines(each_load, METRIC))
+    said = "Outage: log when and how long; the recipe has no restart, so a person decides on it." in text
+    assert said == (each_load.recipe.process == "chrome-hard" and not each_load.stopped)
+
+
+def test_what_is_not_checked_stands_where_the_parts_are_hung(each_load: Plan) -> None:
+    text = joined(card_lines(each_load, METRIC))
+    assert re.search(r" HANG [^:].*; not checked: fit, gaps, tank depth AREA ", text)
+
+
+def test_a_recipe_changed_since_its_approval_says_so_on_the_card(demo: Demo) -> None:
+    made = demo("valve-blocks-24")
+    filed = replace(made.filed, note="another note")
+    text = joined(card_lines(replace(made, filed=filed, status="draft"), METRIC))
+    assert "rev C DRAFT RECIPE (changed since it was approved)" in text
 
 
 ORDER = ["RUN CARD  ", "CHECKS MET|CAUTION|STOP", "DANGER", "SET  |NOTHING TO SET", "BEFORE CURRENT", "AFTER CURRENT",

@@ -7,9 +7,20 @@ from dataclasses import replace
 
 import pytest
 
+from lineplanner.errors import Quantity
 from lineplanner.findings import Finding, Level, lower, upper
 from lineplanner.plan import Plan
-from lineplanner.quantities import AREA, CURRENT, KINDS, TEMPERATURE, THICKNESS
+from lineplanner.quantities import (
+    AREA,
+    CURRENT,
+    KINDS,
+    RATIO,
+    STRESS,
+    TEMPERATURE,
+    THICKNESS,
+    TIME,
+    Kind,
+)
 from lineplanner.report.digits import (
     amperes,
     charge,
@@ -18,6 +29,7 @@ from lineplanner.report.digits import (
     is_lower_limit,
     moment,
     run_time,
+    told_apart,
     use,
     volts,
 )
@@ -90,6 +102,52 @@ def test_a_lower_limit_is_told_from_an_upper_one() -> None:
     assert not is_lower_limit(most)
 
 
+def test_a_finding_without_a_margin_has_no_percent() -> None:
+    finding = Finding("design-authority", Level.STOP, "x", NAMEPLATE, STRESS, 1.8e9, 1.641e9)
+    assert use(finding, METRIC) == "-"
+
+
+# value, limit, kind, style and what is printed: two numbers that differ are never printed alike
+APART = [
+    (0.053, 0.05, RATIO, METRIC, ("5.3 %", "5 %")),
+    (0.0014, 0.01, RATIO, METRIC, ("0.14 %", "1 %")),
+    (0.05, 0.05, RATIO, METRIC, ("5 %", "5 %")),
+    (0.0500003, 0.05, RATIO, METRIC, ("5.00003 %", "5 %")),
+    (0.62, 0.9, RATIO, METRIC, ("62 %", "90 %")),
+    (1234.6, 1235.4, CURRENT, METRIC, ("1234.6 A", "1235.4 A")),
+    (5.009e-5, 5.0e-5, THICKNESS, METRIC, ("50.1 um", "50 um")),
+    (5.009e-5, 5.0e-5, THICKNESS, US, ("1.972 mil", "1.969 mil")),
+    (328.152, 328.15, TEMPERATURE, METRIC, ("55.002 degC", "55 degC")),
+    (400.0 * (1.0 + 1e-12), 400.0, CURRENT, METRIC, ("400 A", "400 A")),  # noise of a conversion
+]
+
+
+@pytest.mark.parametrize(("value", "limit", "kind", "style", "said"), APART, ids=lambda one: str(one)[:20])
+def test_numbers_that_are_compared_are_told_apart(
+    value: float, limit: float, kind: Kind, style: Style, said: tuple[str, str]
+) -> None:
+    assert told_apart(value, limit, kind, style) == said
+
+
+def test_no_finding_of_a_demo_load_prints_demand_and_limit_alike_while_they_differ(each_load: Plan) -> None:
+    for style in (METRIC, US):
+        for finding in each_load.findings:
+            if finding.value is None or finding.limit is None or finding.kind is None:
+                continue
+            one, other = told_apart(finding.value, finding.limit, finding.kind, style)
+            assert (one == other) == (finding.value == pytest.approx(finding.limit, rel=1e-9)), finding.check
+
+
+# --- times in sentences -----------------------------------------------------------------------------------
+
+
+def test_a_time_of_two_hours_and_more_is_said_in_hours() -> None:
+    assert METRIC.fact(Quantity(10_800.0, TIME)) == "3 h"
+    assert METRIC.fact(Quantity(19_560.0, TIME)) == "5.43 h"
+    assert METRIC.fact(Quantity(7200.0, TIME)) == "2 h"
+    assert METRIC.fact(Quantity(7140.0, TIME)) == "119 min"
+
+
 def test_a_temperature_has_no_percent() -> None:
     finding = Finding("rectifier-air", Level.OK, "x", NAMEPLATE, TEMPERATURE, 310.0, 323.0, 0.04)
     assert use(finding, METRIC) == "-"
@@ -151,15 +209,16 @@ ROUNDED = 0.011  # two numbers of three digits each, rounded apart: half a unit 
 
 @pytest.mark.parametrize(("metric", "us", "factor"), PAIRS, ids=[pair[1] for pair in PAIRS])
 def test_both_systems_print_the_same_figures(each_load: Plan, metric: str, us: str, factor: float) -> None:
-    def printed(style: Style) -> str:
-        lines = [
-            *setpoint_lines(each_load, style),
-            *areas_lines(each_load, style),
-            *thickness_lines(each_load, style),
-        ]
+    def printed(style: Style, unit: str) -> str:
+        lines = [*setpoint_lines(each_load, style), *thickness_lines(each_load, style)]
+        head, *rows = areas_lines(each_load, style)
+        if f"in {unit} " in head:  # the unit of the whole table: put behind each number right of the count
+            lines += [
+                re.sub(r" ([\d.]+)(?= |$)", rf" \1 {unit}", row[head.index("count") + 5 :]) for row in rows
+            ]
         return "\n".join(lines)
 
-    first, second = figures(printed(METRIC), metric), figures(printed(US), us)
+    first, second = figures(printed(METRIC, metric), metric), figures(printed(US, us), us)
     assert len(first) == len(second)
     assert first or metric == "A/dm2"
     for one, other in zip(first, second, strict=True):

@@ -4,18 +4,21 @@ import re
 from collections.abc import Callable
 from dataclasses import replace
 
+from lineplanner.files.library import Library
 from lineplanner.findings import Finding, Level, note, upper
 from lineplanner.inputs.cautions import MOMENTS
 from lineplanner.plan import Plan, Thicknesses
 from lineplanner.program.stages import unreachable
 from lineplanner.quantities import CURRENT, THICKNESS
+from lineplanner.report.area_ledger import areas_of
+from lineplanner.report.area_text import area_text
 from lineplanner.report.card import card_lines
 from lineplanner.report.cautions_text import cautions_in_full
 from lineplanner.report.checks_text import checks_lines, others_lines
 from lineplanner.report.digits import charge
 from lineplanner.report.explain import explanation
 from lineplanner.report.plan_json import plan_json
-from lineplanner.report.plan_text import LAST_LINE, plan_text
+from lineplanner.report.plan_text import LAST_LINE, plan_text, recipe_said
 from lineplanner.report.program_text import areas_lines, program_lines, thickness_lines
 from lineplanner.report.setpoints import caution_text
 from lineplanner.report.style import Style
@@ -75,6 +78,44 @@ def test_grinding_stock_is_said_to_be_part_of_the_aim(demo: Demo) -> None:
 def test_rack_metal_of_one_kind_shares_a_row(demo: Demo) -> None:
     lines = areas_lines(demo("valve-blocks-24"), METRIC)
     assert any(line.startswith("  spline 1 to spline 4 ") for line in lines)
+
+
+def test_no_line_of_a_plan_is_wider_than_a_terminal(each_load: Plan) -> None:
+    for style in (METRIC, Style("us", ascii=True), Style("metric")):
+        assert [line for line in plan_text(each_load, style).splitlines() if len(line) > 80] == []
+
+
+def test_no_table_of_areas_is_wider_than_a_terminal(library: Library) -> None:
+    for name in (name for kind in ("load", "rack", "part") for name in library.stems(kind)):
+        for style in (METRIC, Style("us", ascii=True)):
+            lines = area_text(areas_of(library, name), style).splitlines()
+            assert [line for line in lines if len(line) > 80] == [], name
+
+
+def test_parts_of_one_name_are_told_apart_by_their_material(demo: Demo) -> None:
+    rows = [line for line in areas_lines(demo("lug-mix"), METRIC) if line.startswith("  lifting lug")]
+    assert [row.split("  ")[1] for row in rows] == ["lifting lug, 2024-T3", "lifting lug, 6061-T6"]
+    alone = areas_lines(demo("valve-blocks-24"), METRIC)
+    assert alone[1].startswith("  valve block  ")
+
+
+def test_what_this_version_does_not_check_stands_under_the_areas(each_load: Plan) -> None:
+    said = "  not checked by this version: fit, gaps between parts, tank depth"
+    assert areas_lines(each_load, METRIC)[-1] == said
+
+
+# --- the status of the recipe -----------------------------------------------------------------------------
+
+
+def test_a_recipe_whose_values_were_changed_after_its_approval_says_so(demo: Demo) -> None:
+    made = demo("valve-blocks-24")
+    changed = replace(made, status="draft", filed=replace(made.filed, minimum=1e-6))
+    assert recipe_said(changed).endswith(" rev C DRAFT RECIPE (changed since it was approved)")
+    never = replace(made.filed, status="draft", minimum=1e-6)
+    assert recipe_said(replace(changed, filed=never)).endswith(" rev C DRAFT RECIPE")
+    nameless = replace(made.filed, approved_content="")
+    assert recipe_said(replace(changed, filed=nameless)).endswith(" rev C DRAFT RECIPE")
+    assert recipe_said(made).endswith(" rev C approved")
 
 
 # --- checks -----------------------------------------------------------------------------------------------

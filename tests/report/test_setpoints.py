@@ -7,8 +7,8 @@ import pytest
 
 from lineplanner.findings import Finding, Level, note, upper
 from lineplanner.plan import Plan
-from lineplanner.quantities import CURRENT, VOLTAGE
-from lineplanner.report.setpoints import caution_line, setpoint_lines, verdict_line
+from lineplanner.quantities import CURRENT, RATIO, VOLTAGE
+from lineplanner.report.setpoints import caution_line, in_words, setpoint_lines, text_of, verdict_line
 from lineplanner.report.style import Style
 from lineplanner.sources import Source, Status
 
@@ -78,6 +78,14 @@ def test_hard_chrome_is_set_by_its_plating_time_and_told_what_comes_first(demo: 
     assert " A work +" in lines[1]
 
 
+def test_hard_chrome_is_told_the_volts_of_the_strike_beside_those_of_plating(demo: Demo) -> None:
+    made = demo("rod-40x900")
+    assert made.run is not None
+    strike = next(s for s in made.run.stages if s.stage == "strike")
+    assert f"expect 5.2 V, strike {strike.to_voltage:.1f} V" in setpoint_lines(made, METRIC)[-1]
+    assert strike.to_voltage > made.run.end_voltage + 1.0
+
+
 def test_a_run_by_voltage_sets_volts_and_expects_amperes(demo: Demo) -> None:
     lines = setpoint_lines(demo("brackets-chromic-24"), METRIC)
     assert lines[0].startswith("SET  40.0 V   ramp 8 min   ")
@@ -112,7 +120,31 @@ def test_notes_are_counted_in_the_verdict(sketch: Plan) -> None:
 
 def test_a_caution_names_the_gravest_and_counts_the_others(sketch: Plan) -> None:
     made = replace(sketch, findings=(NEAR, BASE, OK, NOTE, NOTE), binding=NEAR)
-    assert verdict_line(made, METRIC) == "CAUTION  contacts 94 % of their limit; 1 more caution; 2 notes"
+    assert verdict_line(made, METRIC) == (
+        "CAUTION  contacts 94 % of their limit; also: lug is of 6061; the recipe is for 2xxx; 2 notes"
+    )
+
+
+def test_one_more_finding_is_named_and_only_if_it_has_no_percentage(sketch: Plan) -> None:
+    again = replace(NEAR, check="rack-rating")
+    made = replace(sketch, findings=(NEAR, again, BASE, BASE, OK), binding=NEAR)
+    assert verdict_line(made, METRIC) == (
+        "CAUTION  contacts 94 % of their limit; also: lug is of 6061; the recipe is for 2xxx; 2 more cautions"
+    )
+    alone = replace(sketch, findings=(NEAR, again, OK), binding=NEAR)
+    assert verdict_line(alone, METRIC) == "CAUTION  contacts 94 % of their limit; 1 more caution"
+
+
+def test_a_finding_without_a_margin_is_said_in_words_and_without_a_percentage(sketch: Plan) -> None:
+    stop = Finding("burning", Level.STOP, "burning", NAMEPLATE, CURRENT, 18.0, 16.4, facts={"family": "2xxx"})
+    assert "%" not in verdict_line(replace(sketch, findings=(stop,), binding=stop), METRIC)
+
+
+def test_a_ripple_over_its_limit_is_printed_over_its_limit() -> None:
+    facts = {"rectifier": "R5", "volts": "5.1 V"}
+    over = Finding("ripple", Level.CAUTION, "ripple", PRACTICE, RATIO, 0.053, 0.05, -0.06, facts=facts)
+    assert text_of(over, METRIC) == "R5: ripple 5.3 % at 5.1 V, limit 5 %"
+    assert in_words(over, METRIC) == "ripple 106 % of its limit"
 
 
 def test_a_caution_that_compares_nothing_is_said_in_words(sketch: Plan) -> None:

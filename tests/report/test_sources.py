@@ -1,6 +1,7 @@
 """Every constant and every value of the tables is listed with status, source and file."""
 
 import ast
+import re
 from dataclasses import fields
 from pathlib import Path
 
@@ -55,6 +56,28 @@ def test_all_tables_are_there(library: Library) -> None:
         f"configs/standards/{path.name}" for path in (library.folder / "configs/standards").glob("*.toml")
     }
     assert files == standards | {"configs/cautions/cautions.toml"}
+
+
+def test_tables_come_before_the_constants_of_the_program(library: Library) -> None:
+    kinds = [one.file.endswith(".py") for one in listed(library)]
+    assert kinds == sorted(kinds)
+
+
+def test_the_text_follows_the_unit_system_and_prints_no_temperature_in_kelvin(library: Library) -> None:
+    metric, us = (sources_text(library, Style(system, ascii=True)) for system in ("metric", "us"))  # type: ignore[arg-type]
+    assert "  coolest bake of the chart: 190 degC  " in metric
+    assert "  coolest bake of the chart: 374 degF  " in us  # 190 x 1.8 + 32
+    assert "  how far a bake stays below the last temper: 28 K  " in metric
+    assert "  how far a bake stays below the last temper: 50.4 degF  " in us  # 28 x 1.8
+    assert ": 500 mV" in us
+    assert not re.search(r": [\d.e-]+ (A/dm2|dm2|um|mm|g/L|degC)  \[", us)
+    assert re.search(r": [\d.e-]+ (A/dm2|um|g/L|degC|K)  \[", metric)
+
+
+def test_a_constant_keeps_six_digits(library: Library) -> None:
+    text = sources_text(library, Style("metric", ascii=True))
+    assert "  Faraday constant: 96485.3321 C/mol  " in text
+    assert "  current density of the stated film voltage: 1.29167 A/dm2  " in text  # 12 A/ft2
 
 
 def test_the_text_names_each_file_once(library: Library) -> None:

@@ -23,5 +23,7 @@ MESSAGES = {
     "area.kind": "`{file}` is a file of kind `{kind}`, which has no area. Name a part, a rack or a load",
     "schema.unknown": "`{kind}` is not a kind of file. Kinds: {kinds}",
     "check.nothing": "no file is named. Name one or more files, or `--schema KIND`",
+    "start.nowhere": "no folder is named. Name an empty or a new one: `lineplanner start DIR`",
+    "approve.nobody": "nobody is named. Say who approves it: `--by NAME`",
     "site.no_loads": "this site holds no load. Write one, or begin with the demo shop: `lineplanner start DIR`",
 }
