@@ -1,0 +1,172 @@
+"""A session: one person's work on the loads of a site, kept on disk when saved and in a journal until then."""
+
+from dataclasses import replace
+from datetime import date
+from pathlib import Path as DiskPath
+
+from lineplanner.errors import PlannerError
+from lineplanner.files.library import Library
+from lineplanner.files.memory import remember, remembered, site_key
+from lineplanner.files.problems import FilesError
+from lineplanner.inputs.approval import approved
+from lineplanner.report.style import Style
+from lineplanner.tui.edited import Ref, redrafted
+from lineplanner.tui.journal import Journal
+from lineplanner.tui.recovery import Recovery, found_recovery, journal_line
+from lineplanner.tui.workbench import Workbench
+
+
+class Session(Workbench):
+    """What the screens work on. Nothing of the site's files changes before `save`.
+
+    memory is the folder for journal and memory; without one nothing is kept between runs.
+    """
+
+    def __init__(self, library: Library, *, style: Style, memory: DiskPath | None) -> None:
+        super().__init__(library, style)
+        self._memory = memory
+        key = site_key(library.place)
+        self._journal = Journal(memory, key)
+        self.recovery: Recovery | None = found_recovery(memory, key)
+
+    # --- the site ----------------------------------------------------------------------------------------
+
+    @property
+    def site_name(self) -> str:
+        """What the site calls itself; the folder's name if that cannot be read."""
+        try:
+            return self.library.site().name
+        except FilesError:
+            return self.library.folder.name
+
+    @property
+    def packaged(self) -> bool:
+        """Whether this is the demo shop out of the package; the first save makes the user's own of it."""
+        return self._disk.library.place.packaged
+
+    def names(self, kind: str) -> list[str]:
+        """The names of the site's files of a kind: what a reference may say."""
+        return list(self._disk.library.stems(kind))
+
+    def loads(self) -> list[str]:
+        """The names of the loads in order."""
+        return self.names("load")
+
+    @property
+    def last_load(self) -> str | None:
+        """The load worked on last; without one that which the site shows first."""
+        known = self.loads()
+        said = self._remembered("load")
+        if said not in known:
+            try:
+                said = self.library.site().first_load
+            except FilesError:
+                said = None
+        return said if said in known else None
+
+    def toggle_units(self) -> None:
+        """Metric in place of US units, or the other way; remembered for this site."""
+        self.style = replace(self.style, system="us" if self.style.system == "metric" else "metric")
+        self._remember(units=self.style.system)
+
+    def open(self, stem: str) -> None:
+        """Open a load, as edited or as it is on disk by now. Raises PlannerError if it cannot be planned."""
+        super().open(stem)
+        self._remember(load=stem)
+
+    def approve(self, recipe: str, by: str, on: str | None = None) -> list[str]:
+        """Approve a recipe as it stands; on is the day, today if not said. The problems if it is refused."""
+        by = by.strip()
+        if not by:
+            return ["no name is given. Say who approves the recipe"]
+        on = on or date.today().isoformat()  # noqa: DTZ011 - the day as the shop's calendar has it
+        ref = ("recipe", recipe)
+        record = approved(self.record(ref), by=by, on=on)
+        return self.set_record(ref, record, f"approved by {by} (recipe {recipe})")
+
+    # --- saving ------------------------------------------------------------------------------------------
+
+    def save(self) -> list[DiskPath]:
+        """Save all that is not saved. Raises FileChangedError, and writes nothing, if one was changed on disk."""
+        refs = self.dirty
+        try:
+            return self._disk.save({ref: self.library.entry(*ref) for ref in refs}) if refs else []
+        finally:
+            self._edited()
+
+    def save_as(self, stem: str) -> DiskPath:
+        """Save the open load under a new name, and go on with that one. The old one is as it is on disk again."""
+        old: Ref = ("load", self._now.name)
+        path = self._disk.save_new(stem, self.library.entry(*old))
+        drafts = dict(self._history.drafts)
+        if old in drafts:
+            drafts[old] = self._disk.entry(old)
+        self._commit(drafts, f"saved as {stem} (load {old[1]})", stem)
+        self._remember(load=stem)
+        return path
+
+    def revert(self) -> None:
+        """Give up all that is not saved. Of files that were changed on disk the new ones count; then undo ends."""
+        name = self.name
+        if self.changed_on_disk:
+            self._start_over(keep=())
+            if name:
+                self.open(name)
+        elif self.dirty:
+            drafts = {ref: self._disk.entry(ref) for ref in self._history.drafts}
+            try:
+                self._commit(drafts, "gave up what was not saved", name)
+            except PlannerError:  # the open load stands on what is given up
+                self._start_over(keep=())
+                raise
+
+    # --- recovery ----------------------------------------------------------------------------------------
+
+    def recover(self) -> None:
+        """Take up what was not saved when the program ended, as one edit. Raises PlannerError if it cannot be."""
+        if self.recovery is None:
+            return
+        drafts = dict(self._history.drafts)
+        for ref in self.recovery.changes:
+            entry = self.library.entry(*ref)
+            drafts[ref] = redrafted(entry, self.recovery.values(ref, entry))
+        self._commit(drafts, "recovered what was not saved", self.recovery.load)
+        self.discard_recovery()
+
+    def discard_recovery(self) -> None:
+        """Do away with what was not saved when the program ended."""
+        if self.recovery is not None:
+            self.recovery.journal.remove()
+            self.recovery = None
+
+    @property
+    def protected(self) -> bool:
+        """Whether unsaved work outlives the program; False if there is no memory or its disk takes nothing."""
+        return self._memory is not None and not self._journal.failed
+
+    def close(self) -> None:
+        """End the session. What is not saved stays in the journal and is offered at the next start."""
+        self._journal.close()
+        if self.recovery is not None:
+            self.recovery.journal.release()
+
+    # --- inside ------------------------------------------------------------------------------------------
+
+    def _edited(self) -> None:
+        """The journal follows what is not saved."""
+        unsaved = {ref: self._disk.entry(ref) for ref in self.dirty}
+        if unsaved:
+            self._journal.write(journal_line(self.name, self.library, unsaved))
+        else:
+            self._journal.clear()
+
+    def _remembered(self, key: str) -> str | None:
+        return remembered(self._memory, self._disk.library.place).get(key) if self._memory else None
+
+    def _remember(self, **values: str) -> None:
+        if self._memory is None:
+            return
+        place = self._disk.library.place
+        known = {key: one for key, one in remembered(self._memory, place).items() if key in ("load", "units")}
+        if known | values != known:
+            remember(self._memory, place, known | values)
