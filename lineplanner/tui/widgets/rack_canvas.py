@@ -1,0 +1,257 @@
+"""The rack picture: parts to scale, one of them selected."""
+
+from collections.abc import Callable
+from typing import ClassVar
+
+import numpy as np
+from rich.segment import Segment
+from rich.style import Style as RichStyle
+from textual import events
+from textual.binding import Binding, BindingType
+from textual.geometry import Region
+from textual.strip import Strip
+from textual.widget import Widget
+
+from lineplanner.report.picture import Direction, Scene
+from lineplanner.tui.widgets.rack_cells import BLANK, Cells, Ink
+from lineplanner.tui.widgets.raster import Codes, Indices, View, text_of
+
+_CLASSES = [f"rack-canvas--{ink.name.lower().replace('_', '-')}" for ink in Ink]  # in the order of inks
+
+Pick = Callable[[int | None], object]
+
+
+class RackCanvas(Widget, can_focus=True):
+    """Draws a scene and lets a part be picked by arrows, n, N or mouse.
+
+    on_pick is called with the owner, in the handler of the key or click that picked it.
+    """
+
+    ALLOW_SELECT = False
+    COMPONENT_CLASSES: ClassVar[set[str]] = set(_CLASSES)
+    DEFAULT_CSS = """
+    RackCanvas {
+        width: 1fr;
+        height: 1fr;
+        min-height: 3;
+        & > .rack-canvas--rack { color: $foreground-muted; }
+        & > .rack-canvas--frame { color: $foreground-muted; }
+        & > .rack-canvas--level { color: $secondary; }
+        & > .rack-canvas--part { color: $foreground; }
+        & > .rack-canvas--dry { color: $warning; }
+        & > .rack-canvas--back { color: $foreground-muted; }
+        & > .rack-canvas--masked { color: $warning; }
+        & > .rack-canvas--tip { color: $foreground-muted; }
+        & > .rack-canvas--number { color: $foreground; }
+        & > .rack-canvas--note { color: $foreground-muted; }
+        & > .rack-canvas--selected { color: $accent; text-style: bold; }
+        & > .rack-canvas--selected-number { color: $accent; text-style: bold reverse; }
+    }
+    """
+    BINDINGS: ClassVar[list[BindingType]] = [
+        Binding("left", "toward('left')", "part to the left", show=False, id="rack.left"),
+        Binding("right", "toward('right')", "part to the right", show=False, id="rack.right"),
+        Binding("up", "toward('up')", "part above", show=False, id="rack.up"),
+        Binding("down", "toward('down')", "part below", show=False, id="rack.down"),
+        Binding("n", "next", "next part", id="rack.next"),
+        Binding("N", "previous", "previous part", show=False, id="rack.previous"),
+    ]
+
+    def __init__(
+        self,
+        on_pick: Pick | None = None,
+        *,
+        ascii_only: bool = False,
+        name: str | None = None,
+        id: str | None = None,  # noqa: A002 - Textual's own word
+        classes: str | None = None,
+    ) -> None:
+        super().__init__(name=name, id=id, classes=classes)
+        self.on_pick = on_pick
+        self.ascii_only = ascii_only
+        self.scene: Scene | None = None
+        self.selected: int | None = None
+        self._view: View | None = None  # None: fitted
+        self._cells: Cells | None = None
+        self._codes: Codes | None = None
+        self._strips: list[Strip | None] = []
+        self._marked: tuple[int, int, int, int] | None = None
+
+    # --- what is shown -----------------------------------------------------------------------------------
+
+    def show(self, scene: Scene | None, selected: int | None = None) -> None:
+        """Another scene, with this part of it selected; the view stays if the scene has the same extent."""
+        if scene is None or self.scene is None or scene.extent != self.scene.extent:
+            self._view = None
+        self.scene = scene
+        self.selected = self._known(selected)
+        self._forget()
+        self.refresh()
+
+    def select(self, owner: int | None) -> None:
+        """Select a part without telling on_pick; repaints the cells of the old and the new one only."""
+        owner = self._known(owner)
+        if owner == self.selected:
+            return
+        self.selected = owner
+        if self._cells is None:
+            self.refresh()
+            return
+        before = self._marked
+        self._mark()
+        touched = [box for box in (before, self._marked) if box is not None]
+        for _, top, _, bottom in touched:
+            self._strips[top:bottom] = [None] * (bottom - top)
+        regions = [Region.from_corners(*box) for box in touched]
+        if len(regions) == 2 and regions[0].y < regions[1].bottom and regions[1].y < regions[0].bottom:
+            regions = [regions[0].union(regions[1])]  # a row is sent from its start: once, not twice
+        if regions:
+            self.refresh(*regions)
+
+    def next(self) -> None:
+        """Pick the part after the selected one; after the last comes the first."""
+        self._step(1)
+
+    def previous(self) -> None:
+        """Pick the part before the selected one."""
+        self._step(-1)
+
+    def toward(self, direction: Direction) -> None:
+        """Pick the neighbour in a direction, if there is one."""
+        found = None if self.scene is None else self.scene.neighbour(self.selected, direction)
+        if found is not None:
+            self.pick(found)
+
+    def pick(self, owner: int | None) -> None:
+        """Select a part and tell on_pick at once."""
+        self.select(owner)
+        if self.on_pick is not None:
+            self.on_pick(self.selected)
+
+    def owner_at(self, column: float, row: float) -> int | None:
+        """The part under a cell of the canvas, or a part of a cell; on the selected one what hangs behind it."""
+        cells = self._built()
+        found = None if cells is None else cells.owner_at(column, row)
+        if found is not None and found == self.selected and self.scene is not None:
+            twin = self.scene.parts[found].twin
+            return found if twin is None else twin
+        return found
+
+    def fit(self) -> None:
+        """Show all of the scene."""
+        self._look(None)
+
+    def zoom(self, factor: float) -> None:
+        """Nearer or farther, about the selected part if there is one."""
+        if self.scene is not None and self._built() is not None:
+            about = None if self.selected is None else self.scene.parts[self.selected].centre
+            self._look(self._seen().zoomed(factor, about))
+
+    def pan(self, columns: float, rows: float) -> None:
+        """Move the window over the scene by cells."""
+        if self.scene is not None and self._built() is not None:
+            self._look(self._seen().panned(columns, rows))
+
+    # --- events ------------------------------------------------------------------------------------------
+
+    def action_toward(self, direction: Direction) -> None:
+        self.toward(direction)
+
+    def action_next(self) -> None:
+        self.next()
+
+    def action_previous(self) -> None:
+        self.previous()
+
+    def on_mouse_down(self, event: events.MouseDown) -> None:
+        """Pick what is under the pointer; an empty place changes nothing."""
+        left, top = self.gutter.left, self.gutter.top
+        found = self.owner_at(event.pointer_x - left, event.pointer_y - top)
+        if found is not None:
+            event.stop()
+            self.pick(found)
+
+    def on_resize(self) -> None:
+        self._forget()
+
+    def notify_style_update(self) -> None:
+        """A theme change: the same cells in other colours."""
+        super().notify_style_update()
+        self._strips = [None] * len(self._strips)
+
+    def render_line(self, y: int) -> Strip:
+        """One line of the picture, kept until it changes."""
+        if self._built() is None or y >= len(self._strips):
+            return Strip.blank(self.size.width, self.rich_style)
+        strip = self._strips[y]
+        if strip is None:
+            strip = self._strips[y] = self._strip(y)
+        return strip
+
+    # --- inside ------------------------------------------------------------------------------------------
+
+    def _known(self, owner: int | None) -> int | None:
+        count = 0 if self.scene is None else len(self.scene.parts)
+        return owner if owner is not None and 0 <= owner < count else None
+
+    def _step(self, by: int) -> None:
+        count = 0 if self.scene is None else len(self.scene.parts)
+        if count:
+            first = 0 if by > 0 else count - 1
+            self.pick(first if self.selected is None else (self.selected + by) % count)
+
+    def _look(self, view: View | None) -> None:
+        self._view = view
+        self._forget()
+        self.refresh()
+
+    def _forget(self) -> None:
+        self._cells, self._codes, self._marked, self._strips = None, None, None, []
+
+    def _seen(self) -> View:
+        """The view of the present size."""
+        assert self.scene is not None
+        width, height = self.size
+        if self._view is None:
+            return View.fitted(self.scene.extent, width, height)
+        return View(width, height, self._view.x, self._view.y, self._view.scale)
+
+    def _built(self) -> Cells | None:
+        """The cells of scene and size, drawn if they are not yet."""
+        if self._cells is None and self.scene is not None and self.size.area:
+            self._cells = Cells(self.scene, self._seen(), ascii_only=self.ascii_only)
+            self._strips = [None] * self.size.height
+            self._mark()
+        return self._cells
+
+    def _mark(self) -> None:
+        assert self._cells is not None
+        self._codes, inks, self._marked = self._cells.with_selected(self.selected)
+        self._inks = _joined_blanks(self._codes, inks.astype(np.int32))
+
+    def _strip(self, y: int) -> Strip:
+        """A row as runs of one ink."""
+        assert self._codes is not None
+        styles, same = self._styles()
+        codes, inks = self._codes[y], same[self._inks[y]]
+        ends = [*(np.flatnonzero(np.diff(inks)) + 1).tolist(), len(inks)]
+        starts = [0, *ends[:-1]]
+        text = text_of(codes)
+        runs = [
+            Segment(text[a:b], styles[ink])
+            for a, b, ink in zip(starts, ends, inks[starts].tolist(), strict=True)
+        ]
+        return Strip(runs, len(inks))
+
+    def _styles(self) -> tuple[list[RichStyle], Indices]:
+        """The style of each ink, and of each ink the first that looks the same: fewer runs, fewer bytes."""
+        styles = [self.get_component_rich_style(name) for name in _CLASSES]
+        return styles, np.array([styles.index(style) for style in styles], dtype=np.int32)
+
+
+def _joined_blanks(codes: Codes, inks: Indices) -> Indices:
+    """Inks with blank cells in the ink before them, so that a row has fewer runs; never in a reversed one."""
+    columns = np.arange(codes.shape[1])
+    before = np.maximum.accumulate(np.where(codes == BLANK, 0, columns), axis=1)
+    joined = np.take_along_axis(inks, before, axis=1)
+    return np.where((joined == Ink.SELECTED_NUMBER) & (codes == BLANK), inks, joined)
