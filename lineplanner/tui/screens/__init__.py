@@ -1,0 +1,1 @@
+"""The screens of lineplanner, one per file with its styles beside it."""
