@@ -1,13 +1,21 @@
 """The door: answers --version at once, hands everything else to the shells."""
 
+from __future__ import annotations
+
 import gc
 import os
 import sys
+from typing import TYPE_CHECKING
 
 from lineplanner import __version__
 
+if TYPE_CHECKING:
+    from lineplanner.cli.opened import Opened, Options
+
 INTERRUPTED = 130
 NEW_OBJECTS = 200_000  # more than a plan makes: a command ends before the collector would find anything
+
+SESSION_OBJECTS = 50_000  # a long run collects as it goes, a start does not
 
 
 def main(arguments: list[str] | None = None) -> int:
@@ -32,9 +40,28 @@ def _run(arguments: list[str]) -> int:
     gc.set_threshold(NEW_OBJECTS)
     from lineplanner import cli
 
-    code = cli.main(arguments)
+    code = cli.main(arguments, _screens) if _on_a_screen() else cli.main(arguments)
     gc.freeze()  # files are closed by now: nothing is left that the interpreter must look through on its way out
     return code
+
+
+def _on_a_screen() -> bool:
+    """Whether a person sits at a terminal that can move its cursor."""
+    streams = (sys.stdin, sys.stdout, sys.stderr)
+    return os.environ.get("TERM") != "dumb" and all(one is not None and one.isatty() for one in streams)
+
+
+def _screens(opened: Opened, options: Options) -> int:
+    """The screens; only here are they loaded."""
+    from lineplanner.cli.fault import kept
+    from lineplanner.tui.app import run
+
+    gc.set_threshold(SESSION_OBJECTS)
+
+    def fault(error: BaseException) -> str:
+        return kept([], (type(error), error, error.__traceback__))
+
+    return run(opened.library, opened.style, fault, remember_units=options.units is None)
 
 
 if __name__ == "__main__":

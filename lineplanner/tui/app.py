@@ -165,7 +165,9 @@ class PlannerApp(App[int], inherit_bindings=False):
                 retell()
 
     def action_light(self) -> None:
-        if not self.native_ansi_color:
+        if self.native_ansi_color:
+            self.say("the colours here are the terminal's own")
+        else:
             self.theme = theme.LIGHT if self.theme == theme.DARK else theme.DARK
 
     def on_planner_screen_fault(self, event: PlannerScreen.Fault) -> None:

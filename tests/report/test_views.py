@@ -15,6 +15,7 @@ from lineplanner.report.layout import columns
 from lineplanner.report.listing import list_load, listed, said_below
 from lineplanner.report.picture import scene_of
 from lineplanner.report.plan_json import numeric_leaves, plan_record
+from lineplanner.report.plan_text import recipe_said
 from lineplanner.report.program_text import areas_lines, program_lines
 from lineplanner.report.rows import Row, Table
 from lineplanner.report.selected import item_of, selected_rows
@@ -30,7 +31,7 @@ from lineplanner.report.view_tables import (
     program_notes,
     program_table,
 )
-from lineplanner.report.views import head_of, why_lines, why_title
+from lineplanner.report.views import head_of, title_text, why_lines, why_title
 
 LIBRARY = Library(Path(__file__).parents[2])
 PLANS = {stem: plan(LIBRARY.case(stem)) for stem in LIBRARY.stems("load")}
@@ -74,6 +75,14 @@ def test_the_figure_of_a_piece_is_the_one_that_it_prints() -> None:
     assert pieces["time.total_s"] == f"{record['time']['total_s'] / 60:g} min"
     assert pieces["charge_Ah.counter"] == f"stop at {record['charge_Ah']['counter']:.0f} Ah"
     assert pieces["program[0].to_s"] == f"ramp {record['program'][0]['to_s'] / 60:g} min"
+
+
+def test_a_title_too_long_gives_up_the_name_of_its_recipe_never_its_status_or_tank() -> None:
+    made = PLANS["rod-40x900"]
+    whole, short = title_text(made, 200), title_text(made, 64)
+    assert whole == f"rod-40x900   {recipe_said(made)}   tank C1"
+    assert len(short) <= 64
+    assert short.endswith(whole[whole.index(" rev ") :])
 
 
 # --- tables -----------------------------------------------------------------------------------------------

@@ -1,0 +1,64 @@
+"""The selected part of a load in words: which it is, where it hangs, what it has in the solution, what it takes."""
+
+from lineplanner.inputs.hanging import parts_hung
+from lineplanner.plan import Plan
+from lineplanner.quantities import ANGLE, AREA, CURRENT_DENSITY, THICKNESS
+from lineplanner.report.digits import amperes
+from lineplanner.report.picture import Hung
+from lineplanner.report.rows import Row
+from lineplanner.report.setpoints import rectifier_of
+from lineplanner.report.style import Style
+from lineplanner.report.words.names import number_of
+
+
+def selected_lines(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[str, str]:
+    """The selected part on two lines: which it is and how it hangs; what it has in the solution and takes."""
+    said = [row.cells[0] for row in selected_rows(plan, style, hang, hung)]
+    return "   ".join(said[:3]), "   ".join(said[3:])
+
+
+def selected_rows(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[Row, ...]:
+    """The same line by line, each with its figure. All areas and currents are those of the item it belongs to."""
+    place = item_of(plan, hang)
+    item, front = plan.areas.items[place], f"area.items[{place}]"
+    each, carrying = style.show(item.wet_each, AREA), style.show(item.carrying, AREA)
+    all_said = f"all {item.count}" if item.count > 1 else "it"
+    rows = [
+        Row((_which(plan, hang, hung),), f"{front}.count"),
+        Row((_how(plan, style, hang, hung),), f"{front}.count"),
+        Row((f"{item.name}, {item.material.name}",), f"{front}.count"),
+        Row((f"one: wet {each}",), f"{front}.each_m2"),
+        Row((f"{all_said}: carrying {carrying}",), f"{front}.carrying_m2"),
+    ]
+    run = None if plan.run is None or plan.stopped or place >= len(plan.run.items) else plan.run.items[place]
+    if run is not None:
+        current = amperes(run.current, rectifier_of(plan), style)
+        density = style.show(run.density, CURRENT_DENSITY)
+        rows.append(Row((f"{all_said}: {current} at {density}",), f"{front}.current_A"))
+        rows.append(Row((f"expected {style.show(run.thickness, THICKNESS)}",), f"{front}.thickness_m"))
+    return tuple(rows)
+
+
+def item_of(plan: Plan, hang: int) -> int:
+    """The item of the areas that an entry of the load belongs to: parts of one drawing and one metal together."""
+    kinds = [(h.part, h.material or plan.case.parts[h.part].material) for h in plan.case.load.hangs]
+    return list(dict.fromkeys(kinds)).index(kinds[hang])
+
+
+def _which(plan: Plan, hang: int, hung: Hung | None) -> str:
+    total = sum(parts_hung(one) for one in plan.case.load.hangs)
+    if hung is not None:
+        return f"part {hung.number} of {total}"
+    return f"{number_of(parts_hung(plan.case.load.hangs[hang]), 'part')} of {total}, only counted"
+
+
+def _how(plan: Plan, style: Style, hang: int, hung: Hung | None) -> str:
+    entry = plan.case.load.hangs[hang]
+    said: list[str] = [entry.facing]
+    if hung is not None:
+        said = [f"tip {hung.tip}" if hung.tip else "free", entry.facing, hung.wetness]
+        said += [f"on the {hung.side}"] if entry.side != "front" else []
+        said += ["with stop-off"] if hung.masked else []
+    if entry.turn:
+        said.append(f"turned {style.show(entry.turn, ANGLE)}")
+    return ", ".join(said)
