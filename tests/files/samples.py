@@ -214,7 +214,8 @@ def caution_text() -> str:
     for name, (word, values) in DECLARED.items():
         text = " ".join(f"{{{value}}}" for value in sorted(values)) or "Take care."
         lines += ["", "[[caution]]", f'id = "{name}"', f'word = "{word}"', "rank = 1", 'moment = ["after"]']
-        lines += [f'text = "{text}"', 'short = "Take care"', 'source = "example"', "as_of = 2026-03-14", 'status = "assumption"']
+        lines += [f'text = "{text}"', 'short = "Take care"', 'source = "example"']
+        lines += ["as_of = 2026-03-14", 'status = "assumption"']
     return "\n".join(lines) + "\n"
 
 
