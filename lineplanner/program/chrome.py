@@ -91,7 +91,8 @@ def run_chrome(job: Job, rectifier: Rectifier, deposition: Deposition) -> Run:
     area = job.areas.carrying
     step = panel_step(rectifier)
     wanted = job.density * area
-    current = panel_current(wanted, step)
+    low, high = job.current_range
+    current = panel_current(wanted, step, low=low, high=high)
     build = _Build(job=job, step=step, stages=[], deposit=0.0, deposition=deposition)
     build.start(start_of(job), current)
     rate = deposition.rate(current / area)

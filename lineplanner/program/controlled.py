@@ -16,7 +16,8 @@ from lineplanner.quantities import Charge, Current, CurrentDensity, Ratio, Thick
 def run_anodizing(job: Job, rectifier: Rectifier, films: Films) -> Run:
     """Run the program on one rectifier: panel current, soft start, hold to the aim, volts along the way."""
     wanted = job.density * job.areas.carrying
-    current = panel_current(wanted, panel_step(rectifier))
+    low, high = job.current_range
+    current = panel_current(wanted, panel_step(rectifier), low=low, high=high)
     start = soft_start_of(job.recipe, tuple(film.family for _, film in films.items), job.density)
     holds = [
         hold_for(film, job.aims.aim, density=films.density(film, current), start=start)

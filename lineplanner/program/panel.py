@@ -42,14 +42,18 @@ def nice_step(value: float) -> float:
     return min(_ROUND, key=lambda step: abs(math.log(value / (step * power)))) * power
 
 
-def panel_current(wanted: Current, step: Current) -> Current:
-    """The setting nearest to a wanted current, at least one step.
+def panel_current(
+    wanted: Current, step: Current, *, low: Current | None = None, high: Current | None = None
+) -> Current:
+    """The setting nearest to a wanted current, at least one step, on the allowed side of a range if one is.
 
-        I_panel = max(1, round(I / step)) step
+        I_panel = max(1, round(I / step)) step, one step back if that leaves low..high and one step back does not
 
     Parameters
         wanted: I, current wanted [A]
         step: of the panel [A]
+        low: of the recipe's range; None: open [A]
+        high: of the recipe's range; None: open [A]
     Returns
         I_panel [A]
     Valid
@@ -59,8 +63,14 @@ def panel_current(wanted: Current, step: Current) -> Current:
     Example
         >>> panel_current(148.4, 1.0)
         148.0
+        >>> panel_current(185.98, 1.0, high=185.98)
+        185.0
     """
-    return max(1.0, float(round(wanted / step))) * step
+    steps = max(1.0, float(round(wanted / step)))
+    low, high = (0.0 if low is None else low), (math.inf if high is None else high)
+    back = steps - 1.0 if steps * step > high else steps + 1.0
+    inside = low <= steps * step <= high
+    return (back if not inside and back >= 1.0 and low <= back * step <= high else steps) * step
 
 
 def rounded_up(time: Time, step: Time) -> Time:

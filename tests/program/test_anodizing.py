@@ -335,3 +335,14 @@ def test_a_longer_hold_cures_a_thin_film_run_by_voltage(make_case) -> None:
     )
     (found,) = [f for f in plan(case).findings if f.check == "band-minimum"]
     assert found.fix == "band.longer"
+
+
+def test_a_setting_at_the_end_of_its_range_is_rounded_to_the_inside(make_case) -> None:
+    """Hand-worked: 28 A/ft2 at most on 6.642 ft2 is 185.98 A; a panel in whole amperes takes 185, not 186."""
+    case = make_case(
+        area=6.642 * FT2, current_density=Ranged(value=28 * ASF, low=22 * ASF, high=28 * ASF), step=1.0
+    )
+    planned = plan(case)
+    assert planned.run is not None
+    assert planned.run.panel_current == 185.0
+    assert not [f for f in planned.findings if f.check == "panel"]
