@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from abc import abstractmethod
 from collections.abc import Iterable
 from typing import ClassVar
 
@@ -59,8 +60,9 @@ class LoadView(Vertical):
         self.stale = False
         self.show(session, moved)
 
+    @abstractmethod
     def show(self, session: Session, moved: frozenset[str]) -> None:
-        raise NotImplementedError
+        """Put the plan of the session into the widgets of this view."""
 
     def select(self, hang: int) -> None:
         """Another entry of the load is selected elsewhere."""
@@ -110,8 +112,9 @@ class TableLoadView(LoadView):
     def show(self, session: Session, moved: frozenset[str]) -> None:
         self.query_one(TableView).show(self.table(session), moved)
 
+    @abstractmethod
     def table(self, session: Session) -> Table:
-        raise NotImplementedError
+        """The rows of this view."""
 
 
 class CardView(TableLoadView):
