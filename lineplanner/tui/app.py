@@ -186,7 +186,7 @@ class PlannerApp(App[int], inherit_bindings=False):
         for name in ("SIGHUP", "SIGTERM"):
             number = getattr(signal, name, None)
             if number is not None:
-                with contextlib.suppress(NotImplementedError, RuntimeError, ValueError):
+                with contextlib.suppress(RuntimeError, ValueError):  # Windows loops take no signal handlers
                     loop.add_signal_handler(number, self._hung_up)
 
     def _hung_up(self) -> None:
