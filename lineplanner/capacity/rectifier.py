@@ -147,11 +147,12 @@ def _ways_out(run: Run, case: Case, value: Current, limit: Current) -> dict[str,
     density = fitting_density(run, limit)
     if density is not None:
         facts["density"] = Quantity(density, CURRENT_DENSITY)
+    if value <= limit:
+        return facts
     share = _part_share(run, case)
-    total = sum(parts_hung(h) for h in case.load.hangs)
-    if share is not None and value > limit:
+    if share is not None:
         off = math.ceil((value - limit) / (share * value))
-        if off < total:
+        if off < sum(parts_hung(h) for h in case.load.hangs):
             facts["parts_off"] = off
     return facts
 
