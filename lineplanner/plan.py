@@ -190,7 +190,7 @@ def _run_findings(
     if proposal is None:
         return [_no_rectifier(job.case)]
     run, case = proposal.run, job.case
-    found = [*proposal.findings, *check_aim(run, job.aims.aim, runner.law), *runner.checks(run)]
+    found = [*proposal.findings, *check_aim(run, job.aims, runner.law), *runner.checks(run)]
     if thickness.band is not None and thickness.low is not None and thickness.high is not None:
         found += check_window(
             job.aims,

@@ -246,19 +246,20 @@ def _metered(rectifier: Rectifier, case: Case) -> tuple[Current, Source]:
 def _volts(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]:
     """Terminal volts against the limit set on the panel, or the rating. Only a setting is a firm demand.
 
-    A run that is held at the limit on its way says so by its own check.
+    Of a run that is held at the limit it is what the set current would take.
     """
-    if not run.stages or run.limit_reached is not None:
+    if not run.stages:
         return
     plate, limit = rectifier.max_voltage, rectifier.most_voltage
     stage = max(run.stages, key=lambda s: (stage_volts(s), s.control == "voltage"))
-    set_by_hand = stage.control == "voltage"  # held at the limit on the way is left out above
+    limited = run.wanted_voltage is not None
+    set_by_hand = stage.control == "voltage" and not limited
     yield upper(
         "rectifier-volts",
-        value=stage_volts(stage),
+        value=stage_volts(stage) if run.wanted_voltage is None else run.wanted_voltage,
         limit=limit,
         kind=VOLTAGE,
-        source=nameplate(rectifier),
+        source=_of_volts(rectifier),
         key="rectifier-volts.set" if set_by_hand else "rectifier-volts",
         fix="rectifier-volts.setting" if set_by_hand else _volts_way(case),
         demand_firm=set_by_hand,
@@ -266,6 +267,13 @@ def _volts(rectifier: Rectifier, run: Run, case: Case) -> Iterator[Finding]:
         stage=stage.stage,
         rated=Quantity(plate, VOLTAGE),
     )
+
+
+def _of_volts(rectifier: Rectifier) -> Source:
+    """Who says how far the volts go: the panel's own limit where it is lower than the rating."""
+    if rectifier.most_voltage < rectifier.max_voltage:
+        return Source(f"voltage limit set on {rectifier.name}", Status.ENTERED)
+    return nameplate(rectifier)
 
 
 def _volts_way(case: Case) -> str:

@@ -6,6 +6,7 @@ from lineplanner.errors import Fact, Quantity
 from lineplanner.findings import Finding, Level, note, upper
 from lineplanner.inputs.change import Deviation
 from lineplanner.load import Item
+from lineplanner.program.aims import Aims
 from lineplanner.program.job import Job
 from lineplanner.program.stages import Run
 from lineplanner.quantities import (
@@ -16,10 +17,14 @@ from lineplanner.quantities import (
     THICKNESS,
     TIME,
     VOLTAGE,
+    Thickness,
 )
 from lineplanner.sources import Source, Status
 
 PANEL_NOTE = 0.05  # relative difference from the recipe's current that is said (design rule of this program)
+LEAST_OF_AIM = (
+    0.9  # part of the aim below which a run held by its volts is stopped (design rule of this program)
+)
 _DUST = 1.0 - 1e-9  # a density that differs from its bound by float dust is inside
 _RECIPE = Source("recipe", Status.ENTERED)
 
@@ -104,8 +109,9 @@ def _bath_temperature(job: Job) -> Iterator[Finding]:
     yield Finding("bath-temperature", Level.CAUTION, key, _RECIPE, fix=fix, facts=facts)
 
 
-def check_aim(run: Run, aim: float, law: Source) -> Iterator[Finding]:
-    """A stop where no time reaches the aim; a caution where the voltage limit leaves it short or late."""
+def check_aim(run: Run, aims: Aims, law: Source) -> Iterator[Finding]:
+    """A stop where the aim or what must be there is out of reach; a caution where the volts make it short or late."""
+    aim = aims.aim
     if run.total_time is None:
         reachable = run.reachable or 0.0
         margin = reachable / aim - 1.0
@@ -118,7 +124,7 @@ def check_aim(run: Run, aim: float, law: Source) -> Iterator[Finding]:
         short = run.thickness < aim * (1.0 - 1e-9)
         yield Finding(
             "voltage-limit",
-            Level.CAUTION,
+            Level.STOP if run.thickness < _least(aims) * (1.0 - 1e-9) else Level.CAUTION,
             "voltage-limit.short" if short else "voltage-limit.reached",
             Source("film voltage model of this program", Status.ASSUMPTION),
             VOLTAGE,
@@ -133,6 +139,11 @@ def check_aim(run: Run, aim: float, law: Source) -> Iterator[Finding]:
                 "limit": Quantity(run.voltage_limit, VOLTAGE),
             },
         )
+
+
+def _least(aims: Aims) -> Thickness:
+    """What must be there at the least: the recipe's minimum, or most of the aim."""
+    return aims.minimum if aims.minimum is not None else LEAST_OF_AIM * aims.aim
 
 
 def check_panel(job: Job, run: Run) -> Iterator[Finding]:

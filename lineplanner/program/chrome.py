@@ -8,11 +8,12 @@ from lineplanner.inputs.line import Rectifier
 from lineplanner.inputs.recipe import Recipe
 from lineplanner.inputs.tables import Substrate
 from lineplanner.load import Item
+from lineplanner.program.crossover import root
 from lineplanner.program.deposition import Deposition
 from lineplanner.program.job import HALF_MINUTE, MINUTE, Job
 from lineplanner.program.panel import panel_current, panel_step, rounded_up
-from lineplanner.program.stages import ItemRun, Polarity, Run, Stage, StageName, unreachable
-from lineplanner.quantities import Current, CurrentDensity, Ratio, Thickness, Time
+from lineplanner.program.stages import Control, ItemRun, Polarity, Run, Stage, StageName, unreachable
+from lineplanner.quantities import Current, CurrentDensity, Ratio, Thickness, Time, Voltage
 
 CATHODIC: Polarity = "work cathodic"
 ANODIC: Polarity = "work anodic"
@@ -93,10 +94,10 @@ def run_chrome(job: Job, rectifier: Rectifier, deposition: Deposition) -> Run:
     wanted = job.density * area
     low, high = job.current_range
     current = panel_current(wanted, step, low=low, high=high)
-    build = _Build(job=job, step=step, stages=[], deposit=0.0, deposition=deposition)
-    build.start(start_of(job), current)
-    rate = deposition.rate(current / area)
     limit = rectifier.most_voltage
+    build = _Build(job=job, step=step, limit=limit, stages=[], deposit=0.0, deposition=deposition, wanted=0.0)
+    build.start(start_of(job), current)
+    rate = deposition.rate(build.held(current) / area)
     if rate <= 0.0:
         return unreachable(
             rectifier=rectifier,
@@ -107,7 +108,8 @@ def run_chrome(job: Job, rectifier: Rectifier, deposition: Deposition) -> Run:
         )
     plate = rounded_up(max(0.0, (job.aims.aim - build.deposit) / rate), MINUTE)
     build.add("plate", CATHODIC, plate, current, current)
-    return _finish(job, rectifier, build, wanted, current, plate, limit)
+    stretch = deposition.rate(current / area) / rate - 1.0
+    return _finish(job, rectifier, build, wanted, current, plate, stretch)
 
 
 @dataclass(slots=True, kw_only=True)
@@ -116,9 +118,11 @@ class _Build:
 
     job: Job
     step: Current
+    limit: Voltage
     deposition: Deposition
     stages: list[Stage]
     deposit: Thickness
+    wanted: Voltage
 
     def start(self, start: Start, current: Current) -> None:
         area = self.job.areas.carrying
@@ -140,12 +144,16 @@ class _Build:
             self.add("strike", CATHODIC, start.strike_time, strike, strike)
 
     def add(self, name: StageName, polarity: Polarity, time: Time, first: Current, last: Current) -> None:
+        """A stage from one current to another, or to what the volts allow of it."""
         area = self.job.areas.carrying
         begin = self.stages[-1].end if self.stages else 0.0
+        self.wanted = max(self.wanted, self.volts(first), self.volts(last))
+        asked, (first, last) = (first, last), (self.held(first), self.held(last))
+        control: Control = "current" if (first, last) == asked else "voltage"
         self.stages.append(
             Stage(
                 stage=name,
-                control="off" if polarity == "off" else "current",
+                control="off" if polarity == "off" else control,
                 polarity=polarity,
                 start=begin,
                 end=begin + time,
@@ -158,6 +166,15 @@ class _Build:
         )
         if polarity == CATHODIC:
             self.deposit += self.deposition.over_ramp(first / area, last / area, time)
+
+    def held(self, current: Current) -> Current:
+        """The current, or what of it the volts allow; 0 where they allow none."""
+        if self.volts(current) <= self.limit:
+            return current
+        least = 1e-6 * current
+        if self.volts(least) >= self.limit:
+            return 0.0
+        return root(lambda i: self.volts(i) - self.limit, least, current)
 
     def volts(self, current: Current) -> float:
         """Terminal volts: cell and circuit. An estimate, and a rough one for the reverse etch."""
@@ -179,10 +196,11 @@ def _finish(
     wanted: Current,
     current: Current,
     plate: Time,
-    limit: float,
+    stretch: Ratio,
 ) -> Run:
     stages = tuple(build.stages)
-    density = current / job.areas.carrying
+    density = stages[-1].to_current / job.areas.carrying
+    limited = next((s.start for s in stages if s.control == "voltage"), None)
     return Run(
         rectifier=rectifier,
         stages=stages,
@@ -202,7 +220,8 @@ def _finish(
         start_voltage=stages[-1].from_voltage,
         end_voltage=stages[-1].to_voltage,
         peak_voltage=max(max(s.from_voltage, s.to_voltage) for s in stages),
-        voltage_limit=limit,
-        limit_reached=None,
-        stretch=0.0,
+        voltage_limit=build.limit,
+        limit_reached=limited,
+        stretch=stretch,
+        wanted_voltage=None if limited is None else build.wanted,
     )

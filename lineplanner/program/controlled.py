@@ -201,7 +201,15 @@ class _Program:
             voltage_limit=self.limit,
             limit_reached=reached,
             stretch=stretch,
+            wanted_voltage=None if reached is None else self._wanted_voltage(total),
+            soft_start=self.start.duration,
+            soft_steps=len(self.start.segments) if self.start.stepped else 0,
         )
+
+    def _wanted_voltage(self, total: Time) -> Voltage:
+        """Volts that the panel current would take at its hungriest, the limit aside."""
+        t_r, t_e = self.start.duration, self.start.equivalent
+        return max(self.volts(1.0, t_e, t_r), self.volts(1.0, t_e + max(0.0, total - t_r), total))
 
 
 def _most(films: Films, start: SoftStart, current: Current) -> Thickness:

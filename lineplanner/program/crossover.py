@@ -4,7 +4,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from lineplanner.program.job import HALF_MINUTE
-from lineplanner.program.panel import rounded_up
+from lineplanner.program.panel import rounded_down, rounded_up
 from lineplanner.program.softstart import Segment, SoftStart
 from lineplanner.quantities import Ratio, Thickness, Time, Voltage
 
@@ -95,7 +95,7 @@ def hold_at_voltage(
     `thickness` is of (equivalent time, time). The end is rounded up to the clock, but not past the cap.
     """
     time, equivalent = reached = supply.crossing(start, total)
-    cap = total * (1.0 + most_stretch)
+    cap = max(total, rounded_down(total * (1.0 + most_stretch), clock))
     step = (cap - time) / STEPS
     points = [(time, equivalent)]
     for number in range(STEPS):

@@ -70,7 +70,11 @@ class ItemRun:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Run:
-    """The program run on one rectifier: stages, time, charge, thickness, volts. None: no number to set."""
+    """The program run on one rectifier: stages, time, charge, thickness, volts. None: no number to set.
+
+    wanted_voltage is what the set current would take where the limit holds it back; soft_start and soft_steps are what
+    to key in, also where the limit cuts the soft start short.
+    """
 
     rectifier: Rectifier | None
     stages: tuple[Stage, ...]
@@ -90,6 +94,9 @@ class Run:
     voltage_limit: Voltage | None
     limit_reached: Time | None
     stretch: float
+    wanted_voltage: Voltage | None = None
+    soft_start: Time = 0.0
+    soft_steps: int = 0
 
     @property
     def counter(self) -> Charge | None:

@@ -41,6 +41,7 @@ _MAY_LACK = frozenset(
         "voltage.peak_V",
         "voltage.limit_V",
         "voltage.limit_reached_s",
+        "binding",
         "binding.margin",
     }
 )

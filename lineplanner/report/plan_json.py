@@ -53,7 +53,7 @@ def plan_record(plan: Plan, style: Style) -> Json:
         "voltage": _voltage(plan),
         "heat": _heat(plan),
         "gas": _gas(plan),
-        "binding": None if plan.binding is None else _binding(plan.binding),
+        "binding": None if plan.binding is None or plan.binding.margin is None else _binding(plan.binding),
         "findings": [_finding(f, style) for f in plan.findings],
         "cautions": [
             {

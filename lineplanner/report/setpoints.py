@@ -9,7 +9,7 @@ from lineplanner.inputs.cautions import Moment
 from lineplanner.inputs.line import Rectifier
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Run, Stage
-from lineplanner.quantities import AREA, CURRENT_DENSITY, Voltage
+from lineplanner.quantities import AREA, CURRENT_DENSITY, Time, Voltage
 from lineplanner.report.digits import (
     CHROME,
     NONE,
@@ -108,8 +108,17 @@ def lead_in_items(plan: Plan, style: Style) -> Iterator[str]:
     """The stages before the main one: ramp 5 min, reverse 60 s at 500 A, ..."""
     rectifier = rectifier_of(plan)
     stages = lead_in(plan)
+    keyed_in = _cut_soft_start(plan)
     steps = [s for s in stages if s.stage == "step"]
-    if steps:
+    if keyed_in is not None:
+        count, time = keyed_in
+        yield (
+            f"{number_of(count, 'step')} in {duration(time, style)}"
+            if count
+            else f"ramp {duration(time, style)}"
+        )
+        stages = tuple(s for s in stages if s.stage != "ramp")
+    elif steps:
         time = sum(s.duration for s in steps)
         yield f"{number_of(len(steps), 'step')} in {duration(time, style)}"
     for stage in stages:
@@ -122,6 +131,14 @@ def lead_in_items(plan: Plan, style: Style) -> Iterator[str]:
         elif stage.stage == "ramp" and stage.control == "voltage" and len(plan.recipe.voltages) > 1:
             text += f" to {volts(stage.to_voltage, style)}"
         yield text
+
+
+def _cut_soft_start(plan: Plan) -> tuple[int, Time] | None:
+    """Steps and time to key in where the voltage limit cuts the soft start short; None where nothing cuts it."""
+    run = plan.run
+    if run is None or run.limit_reached is None or run.limit_reached >= run.soft_start:
+        return None
+    return run.soft_steps, run.soft_start
 
 
 def _expected(plan: Plan, run: Run, style: Style) -> Iterator[str]:

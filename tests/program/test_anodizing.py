@@ -13,12 +13,15 @@ from lineplanner.inputs.case import Case
 from lineplanner.inputs.recipe import VoltageStage
 from lineplanner.inputs.values import Ranged
 from lineplanner.plan import plan
+from lineplanner.program.aims import Aims
 from lineplanner.program.anodizing import films_of, grown, hold_for
+from lineplanner.program.checks import check_aim
 from lineplanner.program.controlled import run_anodizing
 from lineplanner.program.growth import law_of
 from lineplanner.program.job import Job
 from lineplanner.program.runner import runner_of
 from lineplanner.program.softstart import Segment, SoftStart
+from lineplanner.sources import Source, Status
 
 from .conftest import ALUMINIUM, ASF, FT2, SULFURIC, stated
 
@@ -273,6 +276,23 @@ def test_a_limit_met_in_the_ramp_cuts_the_ramp_and_leaves_no_time_at_set_current
     assert 0.0 < planned.limit_reached < 300.0
     assert planned.time_at_set == 0.0
     assert {s.control for s in planned.stages[1:]} == {"voltage"}
+
+
+def test_a_film_left_short_of_its_minimum_by_the_volts_is_a_stop(make_job) -> None:
+    """Without a minimum the recipe is served by nine tenths of the aim; above that it is a caution."""
+    planned = run(make_job(volts=20.0, **HARD))
+    aim = 50e-6
+    assert planned.thickness is not None
+    assert planned.thickness < 0.9 * aim
+
+    def said(minimum: float | None, aim: float = aim) -> Level:
+        aims = Aims(aim=aim, minimum=minimum, maximum=None)
+        return next(check_aim(planned, aims, Source("test", Status.ENTERED))).level
+
+    assert said(None) is Level.STOP
+    assert said(None, aim=planned.thickness / 0.95) is Level.CAUTION
+    assert said(1.01 * planned.thickness) is Level.STOP
+    assert said(0.99 * planned.thickness) is Level.CAUTION
 
 
 def test_a_limit_over_the_rating_is_not_believed(make_job) -> None:

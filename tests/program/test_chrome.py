@@ -139,3 +139,26 @@ def test_a_ramp_deposits_what_many_small_steps_do(start: float, end: float) -> N
 
 
 _DEPOSITION = _deposition()
+
+
+def test_a_rod_held_by_its_volts_plates_with_what_they_leave(rod) -> None:
+    """Current as the volts allow, deposit as that current lays down, time until the aim is met."""
+    plain = {"reverse": "none", "strike_ratio": Ranged(value=1.0)}
+    free = planned(rod(**plain))
+    limit = 0.8 * free.end_voltage
+    held = planned(rod(volts=limit, **plain))
+    assert held.limit_reached is not None
+    assert held.wanted_voltage == pytest.approx(free.end_voltage)
+    assert held.panel_current == free.panel_current  # what is set; the rectifier holds the volts
+    assert held.end_voltage == pytest.approx(limit, rel=1e-9)
+    plate = held.stages[-1]
+    assert plate.control == "voltage"
+    assert plate.to_current < free.panel_current
+    assert held.time_at_set > free.time_at_set
+    assert held.thickness >= 150e-6
+    job = rod(**plain)
+    deposition = deposition_of(job.bath, job.tables.chrome)
+    assert held.thickness == pytest.approx(deposition.rate(plate.to_current / ROD) * plate.duration, rel=1e-9)
+    assert held.stretch == pytest.approx(held.time_at_set / free.time_at_set - 1.0, abs=0.005)
+    assert free.limit_reached is free.wanted_voltage is None
+    assert free.stretch == pytest.approx(0.0, abs=1e-12)

@@ -6,9 +6,16 @@ from dataclasses import replace
 import pytest
 
 from lineplanner.findings import Finding, Level, note, upper
-from lineplanner.plan import Plan
+from lineplanner.plan import Plan, plan
 from lineplanner.quantities import CURRENT, RATIO, VOLTAGE
-from lineplanner.report.setpoints import caution_line, in_words, setpoint_lines, text_of, verdict_line
+from lineplanner.report.setpoints import (
+    caution_line,
+    in_words,
+    lead_in_items,
+    setpoint_lines,
+    text_of,
+    verdict_line,
+)
 from lineplanner.report.style import Style
 from lineplanner.sources import Source, Status
 
@@ -188,3 +195,15 @@ def test_a_notice_never_takes_the_line_from_a_graver_word(each_load: Plan) -> No
 
 def test_without_a_caution_the_line_is_empty(sketch: Plan) -> None:
     assert caution_line(replace(sketch, cautions=()), METRIC) == ""
+
+
+def test_a_ramp_cut_by_the_volts_is_keyed_in_as_the_recipe_has_it(demo: Demo) -> None:
+    made = demo("valve-blocks-24")
+    units = tuple(replace(u, voltage_limit=19.0) for u in made.case.line.rectifiers)
+    held = plan(replace(made.case, line=replace(made.case.line, rectifiers=units)))
+    assert held.run is not None
+    assert held.run.limit_reached is not None
+    assert held.run.limit_reached < held.run.soft_start
+    whole = [item for item in lead_in_items(made, METRIC) if item.startswith("ramp")]
+    assert whole == [item for item in lead_in_items(held, METRIC) if item.startswith("ramp")]
+    assert [f.level for f in held.findings if f.check == "voltage-limit"] == [Level.STOP]
