@@ -2,7 +2,6 @@
 
 import contextlib
 import os
-import secrets
 import tomllib
 from collections.abc import Mapping
 from pathlib import Path as DiskPath
@@ -39,12 +38,19 @@ def remember(folder: DiskPath, site: SiteFolder, values: Mapping[str, str]) -> N
     """Write what is to be remembered, whole or not at all. A disk that takes nothing is no error here."""
     import tomli_w
 
-    path = _path(folder, site)
+    content = tomli_w.dumps({"site": str(site.path), **values}).encode("utf-8")
+    write_whole(_path(folder, site), content)
+
+
+def write_whole(path: DiskPath, content: bytes) -> None:
+    """Write a file of the memory, whole or not at all. A disk that takes nothing is no error here."""
+    import secrets
+
     temporary = path.with_name(f".{path.name}.{secrets.token_hex(4)}.part")
     with contextlib.suppress(OSError):
-        folder.mkdir(parents=True, exist_ok=True)
+        path.parent.mkdir(parents=True, exist_ok=True)
         try:
-            temporary.write_bytes(tomli_w.dumps({"site": str(site.path), **values}).encode("utf-8"))
+            temporary.write_bytes(content)
             temporary.replace(path)
         finally:
             temporary.unlink(missing_ok=True)

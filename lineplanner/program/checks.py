@@ -125,7 +125,7 @@ def check_aim(run: Run, aims: Aims, law: Source) -> Iterator[Finding]:
         yield Finding(
             "voltage-limit",
             Level.STOP if run.thickness < _least(aims) * (1.0 - 1e-9) else Level.CAUTION,
-            "voltage-limit.short" if short else "voltage-limit.reached",
+            _limit_key(run, short=short),
             Source("film voltage model of this program", Status.ASSUMPTION),
             VOLTAGE,
             run.voltage_limit,
@@ -139,6 +139,12 @@ def check_aim(run: Run, aims: Aims, law: Source) -> Iterator[Finding]:
                 "limit": Quantity(run.voltage_limit, VOLTAGE),
             },
         )
+
+
+def _limit_key(run: Run, *, short: bool) -> str:
+    if short:
+        return "voltage-limit.short"
+    return "voltage-limit.reached" if run.stages[-1].control == "voltage" else "voltage-limit.passed"
 
 
 def _least(aims: Aims) -> Thickness:

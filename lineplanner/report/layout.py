@@ -105,3 +105,9 @@ def filled(items: Iterable[str], width: int = WIDTH, *, gap: str = "   ", indent
         else:
             lines.append(indent + item)
     return lines
+
+
+def shortened_verdict(text: str, width: int) -> str:
+    """A verdict cut at a word; its two blanks after the word stay."""
+    word, gap, rest = text.partition("  ")
+    return f"{word}{gap}{shortened(rest, width - len(word) - len(gap))}" if len(text) > width else text

@@ -7,13 +7,12 @@ from lineplanner.files.library import Library
 from lineplanner.findings import Level
 from lineplanner.plan import Plan, plan
 from lineplanner.report.digits import NONE, run_time_said, use
-from lineplanner.report.layout import shortened, wrapped
+from lineplanner.report.listing_lines import UNREAD, said_below
 from lineplanner.report.rows import Listed
 from lineplanner.report.setpoints import (
     SET,
     caution_line,
     setpoint_lines,
-    shortened_verdict,
     verdict_line,
     verdict_word,
     worst,
@@ -23,8 +22,7 @@ from lineplanner.report.words import error_text
 from lineplanner.report.words.names import check_name, number_of
 from lineplanner.units import System
 
-UNREAD = "cannot be read"
-MOST_LINES = 4  # of a problem below the list
+__all__ = ["list_load", "listed", "said_below", "unread"]
 WIDE = 10_000  # characters: whoever shows a line cuts it
 
 
@@ -50,17 +48,6 @@ def unread(stem: str, error: PlannerError, style: Style) -> Listed:
     """A load that cannot be planned, with its first problem."""
     problem = error_text(error, style).splitlines()[0]
     return Listed(stem, (stem, UNREAD, "", NONE, NONE, problem), "unread", stem, f"{UNREAD}: {problem}")
-
-
-def said_below(one: Listed, width: int) -> list[str]:
-    """The whole verdict and the gravest caution of a load, a line each."""
-    if one.level == "unread":
-        return wrapped(one.verdict, width)[:MOST_LINES]
-    said = [shortened_verdict(one.verdict, width)] if one.verdict else []
-    text, plus, more = one.caution.rpartition(" + ")
-    if not plus:
-        text, more = more, ""
-    return said + ([f"{shortened(text, width - len(plus) - len(more))}{plus}{more}"] if text else [])
 
 
 def verdict_short(plan: Plan, style: Style) -> str:

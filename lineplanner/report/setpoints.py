@@ -22,7 +22,7 @@ from lineplanner.report.digits import (
     use,
     volts,
 )
-from lineplanner.report.layout import WIDTH, filled, shortened, wrapped
+from lineplanner.report.layout import WIDTH, filled, shortened, shortened_verdict, wrapped
 from lineplanner.report.style import Style
 from lineplanner.report.words import sentence
 from lineplanner.report.words.names import check_name, its, number_of, work
@@ -74,7 +74,7 @@ def _by_current(plan: Plan, run: Run, style: Style) -> Iterator[str]:
     else:
         yield from lead_in_items(plan, style)
         yield run_time_said(run.total_time, process, style)
-    if run.limit_reached is not None:
+    if run.limit_reached is not None and run.stages[-1].control == "voltage":
         at = run_time_said(run.limit_reached, process, style)
         yield f"held at {volts(run.voltage_limit, style)} from {at}"
     yield f"stop at {charge(run.counter, style)}"
@@ -176,12 +176,6 @@ def verdict_line(plan: Plan, style: Style, width: int | None = None) -> str:
     """The verdict in words, naming what is tightest; cut to a width if one is given."""
     text = f"{verdict_word(plan)}  {_verdict(plan, style)}"
     return text if width is None else shortened_verdict(text, width)
-
-
-def shortened_verdict(text: str, width: int) -> str:
-    """A verdict cut at a word; its two blanks after the word stay."""
-    word, gap, rest = text.partition("  ")
-    return f"{word}{gap}{shortened(rest, width - len(word) - len(gap))}" if len(text) > width else text
 
 
 def worst(plan: Plan) -> Level:

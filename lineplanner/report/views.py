@@ -6,7 +6,7 @@ from lineplanner.plan import Plan
 from lineplanner.quantities import AREA, CURRENT_DENSITY
 from lineplanner.report.digits import amperes, charge, run_time_said, volts
 from lineplanner.report.explain import explanation, stories
-from lineplanner.report.layout import WIDTH, shortened, wrapped
+from lineplanner.report.layout import WIDTH, shortened, shortened_verdict, wrapped
 from lineplanner.report.plan_text import recipe_said
 from lineplanner.report.rows import Head, Line, Piece, Row, Table
 from lineplanner.report.setpoints import (
@@ -17,7 +17,6 @@ from lineplanner.report.setpoints import (
     lead_in,
     lead_in_items,
     setpoint_lines,
-    shortened_verdict,
     verdict_line,
     verdict_word,
     worst,

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import asyncio
 import contextlib
+import gc
 import os
 import signal
 import sys
@@ -32,7 +33,6 @@ if TYPE_CHECKING:
 Kept = Callable[[BaseException], str]
 """Keeps a fault in a log and says so in a sentence."""
 FAULT, HUNG_UP = 3, 129
-WIDGETS = ("table", "head", "viewbar", "hints", "views", "rack_view")
 UNPROTECTED = "no journal can be written: save often, unsaved work would be lost with the program"
 
 
@@ -40,15 +40,14 @@ class PlannerApp(App[int], inherit_bindings=False):
     """The program on a terminal."""
 
     TITLE = "lineplanner"
-    CSS_PATH = [  # noqa: RUF012 - as textual declares it
-        "app.tcss",
-        *(f"widgets/{name}.tcss" for name in WIDGETS),
-    ]
+    # All that the first screen needs, so that styles are worked out once before the first frame.
+    CSS_PATH = ["app.tcss", "widgets/table.tcss", "widgets/hints.tcss", "screens/loads.tcss"]  # noqa: RUF012
     ENABLE_COMMAND_PALETTE = False
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("ctrl+t", "units", "units", priority=True),
-        Binding("ctrl+q", "quit", "quit", priority=True),
-        Binding("ctrl+c", "quit", "quit", show=False),
+        # Without a word, so in no list of keys: flow control may take the one, copying the other.
+        Binding("ctrl+q", "quit", show=False, priority=True),
+        Binding("ctrl+c", "quit", show=False),
         Binding("ctrl+l", "light", "light or dark colours", show=False),
     ]
 
@@ -59,7 +58,9 @@ class PlannerApp(App[int], inherit_bindings=False):
         self.fault = ""
         for one in theme.THEMES:
             self.register_theme(one)
-        self.theme = theme.PLAIN if plain_colours else theme.DARK
+        # Set before anybody watches it: the styles are then worked out once for it, not twice.
+        self.set_reactive(PlannerApp.theme, theme.PLAIN if plain_colours else theme.DARK)
+        self.stylesheet.set_variables(self.get_css_variables())
         if session.style.ascii:
             plain_bars()
 
@@ -232,6 +233,7 @@ def run(library: Library, style: Style, kept: Kept, *, remember_units: bool = Tr
         os.environ.setdefault("TEXTUAL_ANIMATIONS", "none")
     opening = Opening(library, style=style, memory=memory)
     app = PlannerApp(opening, kept, plain_colours=not colours_wanted())
+    gc.freeze()  # what is loaded by now stays: nothing of it is looked through before the first frame
     try:
         code = app.run()
     finally:

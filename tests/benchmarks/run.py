@@ -8,10 +8,11 @@ import platform
 import sys
 
 import replan
+import screens
 import startup
 import text
 
-BENCHMARKS = {"startup": startup.run, "text": text.run, "replan": replan.run}
+BENCHMARKS = {"startup": startup.run, "text": text.run, "replan": replan.run, "screens": screens.run}
 
 
 def main(names: list[str]) -> int:

@@ -1,20 +1,26 @@
-"""How long the rack picture of 200 parts takes: drawn, and from key to repaint on a pseudo-terminal (POSIX)."""
+"""The rack picture of 200 parts, drawn and from key to repaint; the start of the screens against a bare app.
+
+What needs a pseudo-terminal (keys, start) runs on POSIX alone.
+"""
 
 import os
 import select
 import statistics
 import subprocess
 import sys
+import tempfile
 import time
 from collections.abc import Callable, Iterator
 from pathlib import Path
 
 from loads import tips_case
-from timing import Turn, measured, show_times
+from timing import Times, Turn, measured, show_ratios, show_times
 
 from lineplanner.files.library import Library
 from lineplanner.plan import plan
+from lineplanner.report.listing import listed
 from lineplanner.report.picture import Scene, scene_of
+from lineplanner.report.style import Style
 from lineplanner.tui.widgets import raster
 from lineplanner.tui.widgets.rack_canvas import RackCanvas
 from lineplanner.tui.widgets.rack_cells import Cells
@@ -23,21 +29,34 @@ from lineplanner.tui.widgets.raster import View
 SIZES = {"80x24": (80, 24), "160x50": (160, 50)}
 BUILD_TARGETS = {"80x24": 5e-3, "160x50": 12e-3}  # seconds, of a full build
 RUNS, KEYS = 25, 60
+STARTS = 11
+# As so many times the first frame of a bare app.
+START_TARGETS = {"list in sight": 2.0, "setpoints of the first load": 2.5}
+BARE = """
+from textual.app import App
+from textual.widgets import Static
+class Bare(App):
+    def compose(self):
+        yield Static("rev0.")
+Bare().run()
+"""
+_SHOP = Path(__file__).parents[2]
 _WAIT = 10.0  # seconds until a screen that does not answer is given up
 _QUIET = 0.05  # seconds without output after which a repaint is over
 
 
 def run() -> None:
-    """Drawing, then keys."""
+    """Drawing, then keys and starts."""
     scene = the_scene()
     draw(scene)
     if os.name == "posix":
         keys()
+        starts()
 
 
 def the_scene() -> Scene:
     """200 parts on the tips of a rack."""
-    return scene_of(plan(tips_case(Library(Path(__file__).parents[2]))))
+    return scene_of(plan(tips_case(Library(_SHOP))))
 
 
 # --- drawing ---------------------------------------------------------------------------------------------
@@ -45,7 +64,7 @@ def the_scene() -> Scene:
 
 def draw(scene: Scene) -> None:
     """Scene, raster, cells."""
-    made = plan(tips_case(Library(Path(__file__).parents[2])))
+    made = plan(tips_case(Library(_SHOP)))
     turns: dict[str, Turn] = {"scene of a plan": lambda: lambda: scene_of(made)}
     targets: dict[str, float] = {}
     for name, size in SIZES.items():
@@ -91,7 +110,9 @@ def keys() -> None:
     print(f"\nkey to repaint, 200 parts, {KEYS} keys each, in turns")
     print(f"  {'':32}{'median':>10}{'p95':>10}{'bytes':>8}  ratio to empty")
     for name, size in SIZES.items():
-        screens = {kind: Screen(kind, size) for kind in ("empty", "rack")}
+        screens = {kind: Screen([sys.executable, __file__, kind], size) for kind in ("empty", "rack")}
+        for screen in screens.values():
+            screen.seen("rev0.")
         taken: dict[str, list[tuple[float, int]]] = {kind: [] for kind in screens}
         for number in range(1, KEYS + 1):
             for kind, screen in screens.items():
@@ -106,10 +127,47 @@ def keys() -> None:
             screen.close()
 
 
+# --- start -----------------------------------------------------------------------------------------------
+
+
+def starts() -> None:
+    """From process start to what is seen first, in turns: a bare app, the screens, the screens with no rows kept."""
+    library = Library(_SHOP)
+    load = library.site().first_load or next(iter(library.stems("load")))
+    setting = listed(plan(library.case(load)), Style(library.site().units)).cells[3]
+    marks = {"list in sight": load, "setpoints of the first load": setting}
+    found: dict[str, list[float]] = {"bare app, first frame": []}
+    with tempfile.TemporaryDirectory() as home:
+        program = [sys.executable, "-m", "lineplanner", "--site", str(_SHOP)]
+        _started(program, list(marks.values()), Path(home) / "known", stay=3.0)  # the rows are kept
+        for turn in range(STARTS + 1):
+            took = {"bare app, first frame": _started([sys.executable, "-c", BARE], ["rev0."], home)[0]}
+            for name, memory in (("", "known"), (", nothing kept", f"new-{turn}")):
+                times = _started(program, list(marks.values()), Path(home) / memory)
+                took |= {f"{mark}{name}": time for mark, time in zip(marks, times, strict=True)}
+            for name, time_ in took.items() if turn else ():  # the first turn warms the disk
+                found.setdefault(name, []).append(time_)
+    times_of = {name: Times(tuple(each)) for name, each in found.items()}
+    show_ratios("start of the screens, 80x24", times_of, "bare app, first frame", START_TARGETS)
+
+
+def _started(command: list[str], marks: list[str], home: Path | str, stay: float = 0.0) -> list[float]:
+    """Seconds from process start until each text is on the terminal."""
+    own = {"HOME": str(home), "XDG_DATA_HOME": str(Path(home) / "data")}
+    begin = time.perf_counter()
+    screen = Screen(command, (80, 24), own)
+    found = [screen.seen(mark) - begin for mark in marks]
+    end = time.perf_counter() + stay
+    while time.perf_counter() < end:
+        screen.drain()
+    screen.close()
+    return found
+
+
 class Screen:
     """An app on a pseudo-terminal of its own."""
 
-    def __init__(self, kind: str, size: tuple[int, int]) -> None:
+    def __init__(self, command: list[str], size: tuple[int, int], own: dict[str, str] | None = None) -> None:
         import fcntl
         import pty
         import struct
@@ -118,11 +176,11 @@ class Screen:
         self.master, slave = pty.openpty()
         fcntl.ioctl(slave, termios.TIOCSWINSZ, struct.pack("HHHH", size[1], size[0], 0, 0))
         env = {**os.environ, "TERM": "xterm-256color", "COLORTERM": "truecolor", "TEXTUAL_ANIMATIONS": "none"}
+        self.all = b""
         self.child = subprocess.Popen(
-            [sys.executable, __file__, kind], stdin=slave, stdout=slave, stderr=slave, env=env
+            command, stdin=slave, stdout=slave, stderr=slave, env=env | (own or {}), start_new_session=True
         )
         os.close(slave)
-        self._until("rev0.")
 
     def press(self, key: str, answer: str) -> tuple[float, int]:
         """Seconds until the answer is on the terminal, and how many bytes the repaint took in all."""
@@ -132,9 +190,23 @@ class Screen:
         took = time.perf_counter() - begin
         return took, size + sum(len(more) for more in self._read(_QUIET))
 
+    def seen(self, text: str) -> float:
+        """The time at which a text was on the terminal for the first time."""
+        end = time.perf_counter() + _WAIT
+        while text.encode() not in self.all:
+            if time.perf_counter() > end:
+                raise TimeoutError(text)
+            self.drain()
+        return time.perf_counter()
+
+    def drain(self) -> None:
+        """Take what there is to read, waiting a moment for it."""
+        if select.select([self.master], [], [], 0.01)[0]:
+            self.all += os.read(self.master, 1 << 16)
+
     def close(self) -> None:
         """End the app."""
-        self.child.terminate()
+        self.child.kill()
         self.child.wait()
         os.close(self.master)
 

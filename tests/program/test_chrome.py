@@ -162,3 +162,16 @@ def test_a_rod_held_by_its_volts_plates_with_what_they_leave(rod) -> None:
     assert held.stretch == pytest.approx(held.time_at_set / free.time_at_set - 1.0, abs=0.005)
     assert free.limit_reached is free.wanted_voltage is None
     assert free.stretch == pytest.approx(0.0, abs=1e-12)
+
+
+def test_a_strike_held_by_its_volts_lays_down_less_and_the_plating_makes_up_for_it(rod) -> None:
+    hard = {"reverse": "none", "strike_ratio": Ranged(value=2.5), "strike_time": Ranged(value=600.0)}
+    free = planned(rod(**hard))
+    held = planned(rod(volts=0.5 * (free.peak_voltage + free.end_voltage), **hard))
+    strike, plate = held.stages[-2:]
+    assert (strike.stage, strike.control) == ("strike", "voltage")
+    assert (plate.stage, plate.control) == ("plate", "current")
+    assert held.limit_reached == strike.start
+    assert plate.to_current < strike.peak < free.peak_current
+    assert held.time_at_set >= free.time_at_set
+    assert held.thickness >= 150e-6

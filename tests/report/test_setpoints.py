@@ -102,8 +102,12 @@ def test_a_run_by_voltage_sets_volts_and_expects_amperes(demo: Demo) -> None:
 
 def test_a_voltage_limit_on_the_way_is_part_of_the_setpoint(sketch: Plan) -> None:
     assert sketch.run is not None
-    held = replace(sketch, run=replace(sketch.run, limit_reached=1800.0, voltage_limit=75.0))
+    limited = replace(sketch.run, limit_reached=1800.0, voltage_limit=75.0)
+    by_volts = replace(limited.stages[-1], control="voltage")
+    held = replace(sketch, run=replace(limited, stages=(*limited.stages[:-1], by_volts)))
     assert "held at 75.0 V from 30 min" in " ".join(setpoint_lines(held, METRIC))
+    strike_only = replace(sketch, run=limited)  # the volts leave their limit again: nothing is held
+    assert "held at" not in " ".join(setpoint_lines(strike_only, METRIC))
 
 
 def test_a_stopped_plan_has_nothing_to_set(sketch: Plan) -> None:

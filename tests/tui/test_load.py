@@ -14,10 +14,13 @@ from lineplanner.report.explain import explanation
 from lineplanner.report.setpoints import caution_line, setpoint_lines, verdict_line
 from lineplanner.report.style import Style
 from lineplanner.report.view_tables import program_table
+from lineplanner.report.words.names import short_status
+from lineplanner.sources import Status
 from lineplanner.tui.screens.ask import AskScreen
 from lineplanner.tui.screens.load import LoadScreen
 from lineplanner.tui.screens.loads import LoadsScreen
 from lineplanner.tui.session import Session
+from lineplanner.units import System
 from tests.tui.driving import CHECKOUT, drive, site, text_on
 
 METRIC, US = Style("metric"), Style("us")
@@ -278,3 +281,20 @@ def test_a_fault_of_the_program_is_kept_and_told_without_a_traceback(
         drive(steps, told=told.append)
     assert told == ["ZeroDivisionError()"]
     assert "Traceback" not in "".join(capsys.readouterr())
+
+
+@pytest.mark.parametrize("units", ["metric", "us"])
+@pytest.mark.parametrize("load", ["valve-blocks-24", "castings-a356-12", "lug-mix", "vent-panels-24"])
+def test_the_checks_fit_the_narrowest_terminal_with_their_last_column_whole(load: str, units: System) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*load, "enter", "3")
+        await pilot.pause()
+        lines = text_on(pilot).splitlines()
+        head = next(n for n, line in enumerate(lines) if line.startswith("  check "))
+        assert lines[head].endswith(" limit is")
+        column = lines[head].index("limit is")
+        whole = {short_status(one.value) for one in Status}
+        for line in lines[head + 1 : head + 10]:
+            assert line[column:79].strip("[] ") in whole
+
+    drive(steps, size=(80, 24), style=Style(units))

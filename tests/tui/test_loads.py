@@ -183,3 +183,38 @@ def test_a_fault_in_one_load_is_said_and_the_others_are_planned_all_the_same(
         assert len(screen.known) == 15
 
     drive(steps)
+
+
+def test_what_is_named_as_typed_comes_first_and_is_selected() -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        screen = pilot.app.screen
+        assert isinstance(screen, LoadsScreen)
+        await pilot.press("down", *"pump")
+        await pilot.pause()
+        assert screen.shown[0] == "pump-covers-12"
+        assert "castings-a356-12" in screen.shown[1:]  # its part is a pump's
+        assert "> pump-covers-12" in text_on(pilot)
+        await pilot.press("escape", *"pins")
+        await pilot.pause()
+        assert screen.shown[:2] == ["guide-pins-flash", "strut-pins-4340"]
+        await pilot.press("down", "escape")
+        await pilot.pause()
+        assert screen.selected == "strut-pins-4340"  # stays selected among all
+        assert screen.shown == screen.stems
+
+    drive(steps)
+
+
+def test_flow_control_keys_are_in_no_list_of_keys_and_the_way_out_is_f10() -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        assert "F10 quit" in text_on(pilot)
+        assert "ctrl+q" not in text_on(pilot)
+        titles = [title for title, _ in pilot.app.screen.commands()]  # type: ignore[attr-defined]
+        assert [title for title in titles if "quit" in title] == ["quit   F10"]
+        await pilot.press("enter")
+        await pilot.pause()
+        titles = [title for title, _ in pilot.app.screen.commands()]  # type: ignore[attr-defined]
+        assert [title for title in titles if "quit" in title] == ["quit the program   Q"]
+        await pilot.press("ctrl+q")
+
+    assert drive(steps).return_code == 0

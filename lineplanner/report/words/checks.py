@@ -37,6 +37,8 @@ MESSAGES = {
     "allowed gives only {thickness}",
     "voltage-limit.reached": "Volts reach their limit {limit} after {time}; the current falls from there, "
     "and the run takes {stretch} longer",
+    "voltage-limit.passed": "Volts reach their limit {limit} after {time}, before the current is set down; "
+    "until then it is less than asked",
     "voltage-limit.lower": "Lower the current density, or take parts off until the volts stay below {limit}",
     # anodizing
     "mixed-alloys": "Alloys that should not share a rack: {families}",

@@ -30,6 +30,7 @@ from lineplanner.tui.widgets.text import tidy
 from lineplanner.tui.widgets.viewbar import ViewBar
 from lineplanner.tui.widgets.views import VIEWS, LoadView, view_named
 
+WIDGETS = ("head", "viewbar", "views", "rack_view")
 SET_FIGURE = "current.panel_set_A"
 CHANGED = ("S saves this load under another name. R gives up what is not saved and reads the files again.",)
 
@@ -37,7 +38,7 @@ CHANGED = ("S saves this load under another name. R gives up what is not saved a
 class LoadScreen(PlannerScreen):
     """The plan of one load on one screen."""
 
-    CSS_PATH = "load.tcss"
+    CSS_PATH = ["load.tcss", *(f"../widgets/{name}.tcss" for name in WIDGETS)]  # noqa: RUF012 - as textual does
     AUTO_FOCUS = ""
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("question_mark", "why", "why"),
@@ -52,6 +53,7 @@ class LoadScreen(PlannerScreen):
         Binding("q", "leave", "back"),
         Binding("y,Z", "redo", "redo", show=False),
         Binding("S", "save_as", "save under another name", show=False),
+        Binding("Q", "app.quit", "quit the program", show=False),
         Binding("R", "revert", "back to what is saved", show=False),
         Binding("left_square_bracket", "entry(-1)", "entry before", show=False),
         Binding("right_square_bracket", "entry(1)", "next entry", show=False),

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from functools import partial
 from typing import TYPE_CHECKING, ClassVar, cast
 
 from textual import events, on, work
@@ -16,9 +17,10 @@ from textual.worker import Worker, WorkerState, get_current_worker
 
 from lineplanner.errors import InputError, PlannerError
 from lineplanner.files.library import Library
+from lineplanner.report.listing_lines import said_below
 from lineplanner.report.rows import COLUMNS, RIGHT, Listed, Row, Table, waiting
 from lineplanner.report.words import error_text
-from lineplanner.tui.opening import Opening
+from lineplanner.tui.opening import SYSTEMS, KeptRows, Known, Opening
 from lineplanner.tui.screens.base import LEAST, PlannerScreen
 from lineplanner.tui.widgets.hints import Hints
 from lineplanner.tui.widgets.table import TableView
@@ -73,7 +75,9 @@ class LoadsScreen(PlannerScreen):
         self.opening_wanted = self.prepared = self.waits = False
         self.stems: list[str] = []
         self.shown: list[str] = []
-        self.known: dict[str, Mapping[System, Listed]] = {}
+        memory = session.memory if isinstance(session, Opening) else None
+        self.kept = KeptRows(memory, ascii_only=session.style.ascii)
+        self.known: Known = {}
         self.faulty: set[str] = set()
         self.generation = 0
         self.wanted: str | None = None
@@ -94,23 +98,33 @@ class LoadsScreen(PlannerScreen):
 
     def on_mount(self) -> None:
         self.query_one("#find", Input).cursor_blink = False
-        self.read(self.session.last_load)
+        self.read(self.session.last_load, kept=True)
 
     # --- which loads -------------------------------------------------------------------------------------
 
-    def read(self, select: str | None = None) -> None:
-        """The loads as they are on disk now; what was planned before is planned again."""
+    def read(self, select: str | None = None, *, kept: bool = False) -> None:
+        """The loads as they are on disk now; what was planned before is planned again.
+
+        kept takes up the rows of an earlier run if nothing that they depend on has changed since.
+        """
         self.generation += 1
         self.stems = self.session.loads()
-        self.known, self.faulty = {}, set()
-        self.find(select)
-        self.call_after_refresh(self.plan_all, self.generation)
+        site = self.session.library.place
+        stamp = self.kept.stamp(site)
+        rows = self.kept.rows(site, stamp) if kept else {}
+        self.known, self.faulty = {stem: rows[stem] for stem in self.stems if stem in rows}, set()
+        self.find(select or self.selected)
+        start = partial(self.plan_all, self.generation, stamp)
+        if self.wanted in self.known:  # nobody waits: the first frame gets the processor for itself
+            self.set_timer(PAUSE, start)
+        else:
+            self.call_after_refresh(start)
 
     def find(self, select: str | None = None) -> None:
-        """The loads that hold every word typed."""
+        """The loads that hold every word typed, those named so first; without a choice the first is selected."""
         words = self.query_one("#find", Input).value.casefold().split()
-        select = select or self.selected
-        self.shown = [stem for stem in self.stems if all(word in self._found_by(stem) for word in words)]
+        found = (stem for stem in self.stems if all(word in self._found_by(stem) for word in words))
+        self.shown = sorted(found, key=lambda stem: _nearness(stem, words))
         self.wanted = select if select in self.shown else next(iter(self.shown), None)
         self.show(self.shown.index(self.wanted) if self.wanted else 0)
 
@@ -161,8 +175,6 @@ class LoadsScreen(PlannerScreen):
         elif stem is None:
             lines.append("no load holds what is typed: Escape shows all")
         elif stem in self.known:
-            from lineplanner.report.listing import said_below
-
             lines += said_below(self._listed(stem), width)
         text = "\n".join(tidy(line, ascii_only=self.session.style.ascii) for line in lines)
         self.query_one("#below", Static).update(Content(text))
@@ -186,19 +198,20 @@ class LoadsScreen(PlannerScreen):
     # --- planning in the background ----------------------------------------------------------------------
 
     @work(thread=True, exclusive=True, group="listing", exit_on_error=False)
-    def plan_all(self, generation: int) -> None:
-        """Plan every load, the one under the cursor first."""
+    def plan_all(self, generation: int, stamp: str | None) -> None:
+        """Plan every load that no row is known of, the one under the cursor first; keep the rows for the next start."""
         from lineplanner.report.listing import list_load
 
         worker, library = get_current_worker(), Library(self.session.library.place)
-        systems: tuple[System, ...] = ("metric", "us")
         while not worker.is_cancelled and (stem := self._next()) is not None:
             self.at_work = stem
-            found = list_load(library, stem, systems, self.session.style)
+            found = list_load(library, stem, SYSTEMS, self.session.style)
             if not worker.is_cancelled:
                 self.app.call_from_thread(self.planned, generation, stem, found)
             self._load_the_rest()
         self._load_the_rest()
+        if not worker.is_cancelled and generation == self.generation:
+            self.kept.keep(library.place, stamp, dict(self.known))
 
     def _load_the_rest(self) -> None:
         """What opening a load needs, loaded while the first one is being read."""
@@ -239,13 +252,13 @@ class LoadsScreen(PlannerScreen):
             self.faulty.add(stem)
             self.post_message(self.Fault(stem, error))
             self.show()
-            self.plan_all(self.generation)
+            self.plan_all(self.generation, None)
 
     # --- commands ----------------------------------------------------------------------------------------
 
     @on(Input.Changed, "#find")
-    def _typed(self) -> None:
-        self.find()
+    def _typed(self, event: Input.Changed) -> None:
+        self.find(None if event.value.strip() else self.selected)
 
     @on(Input.Submitted, "#find")
     def _entered(self) -> None:
@@ -306,6 +319,13 @@ class LoadsScreen(PlannerScreen):
     def action_help(self) -> None:
         keys = [title for title, _ in self.commands()]
         self.tell("Loads", [*HELP, "", *keys])
+
+
+def _nearness(stem: str, words: list[str]) -> int:
+    """How near a name is to the words: begins with them, holds them, or is found by something else."""
+    if not all(word in stem.casefold() for word in words):
+        return 2
+    return 0 if stem.casefold().startswith("".join(words[:1])) else 1
 
 
 HELP = (

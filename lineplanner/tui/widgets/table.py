@@ -10,7 +10,7 @@ from rich.segment import Segment
 from rich.style import Style
 from textual import events
 from textual.binding import Binding, BindingType
-from textual.geometry import Region
+from textual.geometry import Region, Size
 from textual.message import Message
 from textual.strip import Strip
 from textual.widget import Widget
@@ -20,7 +20,7 @@ from lineplanner.tui.widgets.text import fitted, tidy
 
 FRONT = 2  # cells before the first column: cursor and mark of a change
 LEAST = 22  # cells that a stretching column gets at the cost of the shrinking one
-NAME = 16  # cells that a name keeps when it gives way to figures
+NAME = 12  # cells that a name keeps when it gives way to figures
 NARROW = 8  # cells that the shrinking column keeps
 _TONES = {
     "STOP": "danger",
@@ -88,11 +88,12 @@ class TableView(Widget, can_focus=True):
         super().__init__(id=id)
         self.headed, self.by_cell, self.stretch, self.ascii = headed, by_cell, stretch, ascii_only
         self.reading, self.front = reading, 0 if reading else FRONT
-        self.giver, self.tone_column, self.gap = giver, tone_column, gap
+        self.giver, self.tone_column, self.gap, self.gap_wanted = giver, tone_column, gap, gap
         self.table = Table((), frozenset(), ())
         self.moved: frozenset[str] = frozenset()
         self.row = self.column = self.top = self.shift = 0
         self._widths: tuple[int, ...] = ()
+        self._fitted = Size(0, 0)
 
     # --- what it shows -----------------------------------------------------------------------------------
 
@@ -100,8 +101,7 @@ class TableView(Widget, can_focus=True):
         """Show rows; the cursor stays where it is unless a row is named."""
         self.table, self.moved = table, moved
         self.row = max(0, min(self.row if row is None else row, len(table.rows) - 1))
-        self._measure()
-        self._keep_in_sight()
+        self._fit()
         self.refresh()
 
     def unmark(self) -> None:
@@ -127,13 +127,25 @@ class TableView(Widget, can_focus=True):
         """How many rows are in sight."""
         return max(1, self.size.height - self.headed)
 
+    def _fit(self) -> None:
+        """Columns and rows in sight for the size that the table has now."""
+        self._fitted = self.size
+        self._measure()
+        if self.size:
+            self._keep_in_sight()
+
     def _measure(self) -> None:
         """Widths of the columns; the stretching one takes what is left."""
         rows: list[tuple[str, ...]] = [self.table.columns] if self.headed else []
         rows += [row.cells for row in self.table.rows]
         count = max((len(row) for row in rows), default=0)
         widths = [max((cell_len(row[n]) for row in rows if n < len(row)), default=0) for n in range(count)]
-        over = self.front + sum(widths) + self.gap * (count - 1) + 1 - self.size.width
+        self.gap = self.gap_wanted
+        over = (
+            self.front + sum(widths) + self.gap * (count - 1) + 1 - self.size.width
+        )  # 1: the bar at the right
+        if self.by_cell and count and over > 0 and self.size.width:
+            over = self._narrowed(widths, over)
         if self.stretch is None and self.giver is not None and self.giver < count and over > 0:
             widths[self.giver] = max(min(widths[self.giver], NAME), widths[self.giver] - over)
         elif self.stretch is not None and self.stretch < count:
@@ -147,6 +159,16 @@ class TableView(Widget, can_focus=True):
             widths[self.stretch] = max(NARROW, left)
         self._widths = tuple(widths)
 
+    def _narrowed(self, widths: list[int], over: int) -> int:
+        """Put the columns closer and shorten the names, if the whole table is in sight then; what is still over."""
+        closer = (self.gap - 1) * (len(widths) - 1)
+        giver = self.giver or 0
+        if over > closer + max(0, widths[giver] - NAME):
+            return over
+        self.gap = 1
+        widths[giver] -= max(0, over - closer)
+        return 0
+
     def _keep_in_sight(self) -> None:
         most = max(0, len(self.table.rows) - self.room)
         self.top = min(max(self.top, self.row - self.room + 1, 0), self.row, most)
@@ -157,8 +179,7 @@ class TableView(Widget, can_focus=True):
             self.shift = max(min(self.shift, first), end - self.size.width + 1, 0)
 
     def on_resize(self) -> None:
-        self._measure()
-        self._keep_in_sight()
+        self._fit()
 
     # --- moving ------------------------------------------------------------------------------------------
 
@@ -227,6 +248,8 @@ class TableView(Widget, can_focus=True):
     # --- drawing -----------------------------------------------------------------------------------------
 
     def render_line(self, y: int) -> Strip:
+        if self._fitted != self.size:  # drawn before the event that tells of the new size
+            self._fit()
         width, base = self.size.width, self.rich_style
         if self.headed and y == 0:
             text = " " * self.front + (" " * self.gap).join(
@@ -265,10 +288,12 @@ class TableView(Widget, can_focus=True):
                 toned += Style(underline=True) if here else self.get_component_rich_style("table--changed")
             chosen = here and self.by_cell and n == self.column and self.has_focus
             segments.append(Segment(self._cell(n, text), toned))
-            segments.append(Segment("]" if chosen else " ", style))
             after = here and self.by_cell and n + 1 == self.column and self.has_focus
             if self.gap > 1:
+                segments.append(Segment("]" if chosen else " ", style))
                 segments.append(Segment("[" if after else " ", style))
+            else:
+                segments.append(Segment("]" if chosen else "[" if after else " ", style))
         return segments
 
     def _mark(self, row: Row, here: bool, style: Style) -> Segment:  # noqa: FBT001
