@@ -1,6 +1,6 @@
 """Hard chrome: soak, reverse etch, start, strike, plate."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from lineplanner.bath.heat import soak_time
 from lineplanner.bath.voltage import chrome_cell_voltage
@@ -12,7 +12,7 @@ from lineplanner.program.crossover import root
 from lineplanner.program.deposition import Deposition
 from lineplanner.program.job import HALF_MINUTE, MINUTE, Job
 from lineplanner.program.panel import panel_current, panel_step, rounded_up
-from lineplanner.program.stages import Control, ItemRun, Polarity, Run, Stage, StageName, unreachable
+from lineplanner.program.stages import ItemRun, Polarity, Run, Stage, StageName, unreachable
 from lineplanner.quantities import Current, CurrentDensity, Ratio, Thickness, Time, Voltage
 
 CATHODIC: Polarity = "work cathodic"
@@ -95,7 +95,9 @@ def run_chrome(job: Job, rectifier: Rectifier, deposition: Deposition) -> Run:
     low, high = job.current_range
     current = panel_current(wanted, step, low=low, high=high)
     limit = rectifier.most_voltage
-    build = _Build(job=job, step=step, limit=limit, stages=[], deposit=0.0, deposition=deposition, wanted=0.0)
+    build = _Build(
+        job=job, step=step, limit=limit, stages=[], asked=[], deposit=0.0, deposition=deposition, wanted=0.0
+    )
     build.start(start_of(job), current)
     rate = deposition.rate(build.held(current) / area)
     if rate <= 0.0:
@@ -121,6 +123,7 @@ class _Build:
     limit: Voltage
     deposition: Deposition
     stages: list[Stage]
+    asked: list[Stage]
     deposit: Thickness
     wanted: Voltage
 
@@ -148,22 +151,31 @@ class _Build:
         area = self.job.areas.carrying
         begin = self.stages[-1].end if self.stages else 0.0
         self.wanted = max(self.wanted, self.volts(first), self.volts(last))
-        asked, (first, last) = (first, last), (self.held(first), self.held(last))
-        control: Control = "current" if (first, last) == asked else "voltage"
-        self.stages.append(
-            Stage(
-                stage=name,
-                control="off" if polarity == "off" else control,
-                polarity=polarity,
-                start=begin,
-                end=begin + time,
+        asked = Stage(
+            stage=name,
+            control="off" if polarity == "off" else "current",
+            polarity=polarity,
+            start=begin,
+            end=begin + time,
+            from_current=first,
+            to_current=last,
+            from_voltage=self.volts(first),
+            to_voltage=self.volts(last),
+            density=last / area,
+        )
+        self.asked.append(asked)
+        if (first, last) != (self.held(first), self.held(last)):
+            first, last = self.held(first), self.held(last)
+            asked = replace(
+                asked,
+                control="voltage",
                 from_current=first,
                 to_current=last,
                 from_voltage=self.volts(first),
                 to_voltage=self.volts(last),
                 density=last / area,
             )
-        )
+        self.stages.append(asked)
         if polarity == CATHODIC:
             self.deposit += self.deposition.over_ramp(first / area, last / area, time)
 
@@ -224,4 +236,5 @@ def _finish(
         limit_reached=limited,
         stretch=stretch,
         wanted_voltage=None if limited is None else build.wanted,
+        asked=() if limited is None else tuple(build.asked[:-1]),
     )

@@ -1,5 +1,6 @@
 """Anodizing under current control on one rectifier: soft start, hold, and what happens where the volts run out."""
 
+import math
 from dataclasses import dataclass
 
 from lineplanner.inputs.line import Rectifier
@@ -202,8 +203,7 @@ class _Program:
             limit_reached=reached,
             stretch=stretch,
             wanted_voltage=None if reached is None else self._wanted_voltage(total),
-            soft_start=self.start.duration,
-            soft_steps=len(self.start.segments) if self.start.stepped else 0,
+            asked=() if reached is None else tuple(self._before(math.inf)),
         )
 
     def _wanted_voltage(self, total: Time) -> Voltage:

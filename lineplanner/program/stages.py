@@ -72,8 +72,8 @@ class ItemRun:
 class Run:
     """The program run on one rectifier: stages, time, charge, thickness, volts. None: no number to set.
 
-    wanted_voltage is what the set current would take where the limit holds it back; soft_start and soft_steps are what
-    to key in, also where the limit cuts the soft start short.
+    Where the limit holds the current back, wanted_voltage is what the set current would take, and asked the stages
+    before the main one as they are set on the panel, with the current that the limit leaves out of the stages.
     """
 
     rectifier: Rectifier | None
@@ -95,8 +95,7 @@ class Run:
     limit_reached: Time | None
     stretch: float
     wanted_voltage: Voltage | None = None
-    soft_start: Time = 0.0
-    soft_steps: int = 0
+    asked: tuple[Stage, ...] = ()
 
     @property
     def counter(self) -> Charge | None:

@@ -16,6 +16,7 @@ from lineplanner.report.plan_id import plan_id
 from lineplanner.report.plan_text import LAST_LINE, deviation_lines, recipe_said
 from lineplanner.report.setpoints import (
     caution_line,
+    keyed_in,
     lead_in,
     rectifier_of,
     setpoint_lines,
@@ -87,7 +88,7 @@ def _middle(plan: Plan, style: Style) -> list[str]:
 def _ramp_table(plan: Plan, style: Style) -> list[str]:
     """By hand: when to set what, where the rectifier does not ramp by itself."""
     rectifier = rectifier_of(plan)
-    ramps = [s for s in lead_in(plan) if s.stage in ("ramp", "step")]
+    ramps = [s for s in keyed_in(plan) if s.stage in ("ramp", "step")]
     if not ramps or (rectifier is not None and rectifier.can_ramp and all(s.stage == "ramp" for s in ramps)):
         return []
     process = plan.recipe.process

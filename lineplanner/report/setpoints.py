@@ -9,7 +9,7 @@ from lineplanner.inputs.cautions import Moment
 from lineplanner.inputs.line import Rectifier
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Run, Stage
-from lineplanner.quantities import AREA, CURRENT_DENSITY, Time, Voltage
+from lineplanner.quantities import AREA, CURRENT_DENSITY, Voltage
 from lineplanner.report.digits import (
     CHROME,
     NONE,
@@ -51,6 +51,12 @@ def lead_in(plan: Plan) -> tuple[Stage, ...]:
     return stages[: len(stages) - len(main_stages(plan))]
 
 
+def keyed_in(plan: Plan) -> tuple[Stage, ...]:
+    """The stages before the main ones as they are set on the panel, whatever a voltage limit leaves of them."""
+    run = plan.run
+    return lead_in(plan) if run is None or run.limit_reached is None else run.asked
+
+
 def setpoint_lines(plan: Plan, style: Style, width: int = WIDTH) -> list[str]:
     """What to set on the panel; the second and later lines say on what it rests and what to expect."""
     run = plan.run
@@ -85,7 +91,7 @@ def _before_plating(plan: Plan, run: Run, style: Style, width: int) -> list[str]
     """Hard chrome: what comes before the plating, on a line of its own."""
     if plan.recipe.process != CHROME:
         return []
-    items = ["first", *lead_in_items(plan, style)] if lead_in(plan) else []
+    items = ["first", *lead_in_items(plan, style)] if keyed_in(plan) else []
     return filled([*items, f"total {run_time_said(run.total_time, CHROME, style)}"], width)
 
 
@@ -107,18 +113,9 @@ def _where(run: Run, plan: Plan) -> Iterator[str]:
 def lead_in_items(plan: Plan, style: Style) -> Iterator[str]:
     """The stages before the main one: ramp 5 min, reverse 60 s at 500 A, ..."""
     rectifier = rectifier_of(plan)
-    stages = lead_in(plan)
-    keyed_in = _cut_soft_start(plan)
+    stages = keyed_in(plan)
     steps = [s for s in stages if s.stage == "step"]
-    if keyed_in is not None:
-        count, time = keyed_in
-        yield (
-            f"{number_of(count, 'step')} in {duration(time, style)}"
-            if count
-            else f"ramp {duration(time, style)}"
-        )
-        stages = tuple(s for s in stages if s.stage != "ramp")
-    elif steps:
+    if steps:
         time = sum(s.duration for s in steps)
         yield f"{number_of(len(steps), 'step')} in {duration(time, style)}"
     for stage in stages:
@@ -131,14 +128,6 @@ def lead_in_items(plan: Plan, style: Style) -> Iterator[str]:
         elif stage.stage == "ramp" and stage.control == "voltage" and len(plan.recipe.voltages) > 1:
             text += f" to {volts(stage.to_voltage, style)}"
         yield text
-
-
-def _cut_soft_start(plan: Plan) -> tuple[int, Time] | None:
-    """Steps and time to key in where the voltage limit cuts the soft start short; None where nothing cuts it."""
-    run = plan.run
-    if run is None or run.limit_reached is None or run.limit_reached >= run.soft_start:
-        return None
-    return run.soft_steps, run.soft_start
 
 
 def _expected(plan: Plan, run: Run, style: Style) -> Iterator[str]:

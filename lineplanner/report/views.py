@@ -14,7 +14,7 @@ from lineplanner.report.setpoints import (
     caution_line,
     caution_text,
     expected_volts,
-    lead_in,
+    keyed_in,
     lead_in_items,
     setpoint_lines,
     verdict_line,
@@ -109,12 +109,17 @@ def item_paths(plan: Plan, style: Style) -> dict[str, str]:
 
 
 def _lead_in_paths(plan: Plan, style: Style) -> Iterator[tuple[str, str]]:
-    """What comes before the main stage, each with the end of its stage; steps are said first, as one."""
-    places = range(len(lead_in(plan)))
-    steps = [n for n in places if lead_in(plan)[n].stage == "step"]
-    order = steps[-1:] + [n for n in places if n not in steps]
+    """What comes before the main stage, each with the end of its stage; steps are said first, as one.
+
+    What a voltage limit cuts short goes to the time of the limit: there the set figures end.
+    """
+    stages = keyed_in(plan)
+    steps = [n for n in range(len(stages)) if stages[n].stage == "step"]
+    order = steps[-1:] + [n for n in range(len(stages)) if n not in steps]
+    run = () if plan.run is None else plan.run.stages
     for text, place in zip(lead_in_items(plan, style), order, strict=True):
-        yield text, f"program[{place}].to_s"
+        whole = place < len(run) and run[place].end == stages[place].end
+        yield text, f"program[{place}].to_s" if whole else "voltage.limit_reached_s"
 
 
 def verdict_path(plan: Plan) -> str | None:

@@ -8,6 +8,7 @@ import pytest
 from lineplanner.findings import Finding, Level, note, upper
 from lineplanner.plan import Plan, plan
 from lineplanner.quantities import CURRENT, RATIO, VOLTAGE
+from lineplanner.report.card import card_lines
 from lineplanner.report.setpoints import (
     caution_line,
     in_words,
@@ -17,6 +18,7 @@ from lineplanner.report.setpoints import (
     verdict_line,
 )
 from lineplanner.report.style import Style
+from lineplanner.report.views import head_of
 from lineplanner.sources import Source, Status
 
 METRIC = Style("metric", ascii=True)
@@ -201,13 +203,39 @@ def test_without_a_caution_the_line_is_empty(sketch: Plan) -> None:
     assert caution_line(replace(sketch, cautions=()), METRIC) == ""
 
 
-def test_a_ramp_cut_by_the_volts_is_keyed_in_as_the_recipe_has_it(demo: Demo) -> None:
+def limited(made: Plan, limit: float, **rectifier: bool) -> Plan:
+    """The plan on rectifiers that give no more than so many volts."""
+    units = tuple(replace(u, voltage_limit=limit, **rectifier) for u in made.case.line.rectifiers)
+    return plan(replace(made.case, line=replace(made.case.line, rectifiers=units)))
+
+
+@pytest.mark.parametrize("limit", [30.0, 26.4, 25.0, 19.0, 16.0, 4.0])
+def test_a_ramp_cut_by_the_volts_is_set_as_the_recipe_has_it(demo: Demo, limit: float) -> None:
+    """Wherever the limit lies, in the hold, in the ramp or below the first volt, the whole ramp is set."""
     made = demo("valve-blocks-24")
-    units = tuple(replace(u, voltage_limit=19.0) for u in made.case.line.rectifiers)
-    held = plan(replace(made.case, line=replace(made.case.line, rectifiers=units)))
+    held = limited(made, limit, can_ramp=False)
+    assert list(lead_in_items(held, METRIC)) == list(lead_in_items(made, METRIC))
+    head_of(held, METRIC)
+    if held.stopped:
+        return
+    assert held.run is not None
+    assert held.run.panel_current is not None
+    table = next(line for line in card_lines(held, METRIC) if line.strip().startswith("at min"))
+    assert f"{held.run.panel_current:.0f} A" in " ".join(card_lines(held, METRIC)).split(table)[1]
+
+
+def test_a_film_the_volts_leave_short_stops_the_plan(demo: Demo) -> None:
+    held = limited(demo("valve-blocks-24"), 19.0)
+    assert [f.level for f in held.findings if f.check == "voltage-limit"] == [Level.STOP]
+
+
+def test_a_strike_held_by_its_volts_is_set_as_asked(demo: Demo) -> None:
+    """What flows is in the program; what is set on the panel is what the recipe asks for."""
+    made = demo("rod-40x900")
+    assert made.run is not None
+    held = limited(made, 0.5 * (made.run.end_voltage + made.run.peak_voltage))
     assert held.run is not None
     assert held.run.limit_reached is not None
-    assert held.run.limit_reached < held.run.soft_start
-    whole = [item for item in lead_in_items(made, METRIC) if item.startswith("ramp")]
-    assert whole == [item for item in lead_in_items(held, METRIC) if item.startswith("ramp")]
-    assert [f.level for f in held.findings if f.check == "voltage-limit"] == [Level.STOP]
+    assert list(lead_in_items(held, METRIC)) == list(lead_in_items(made, METRIC))
+    assert max(s.peak for s in held.run.stages) < max(s.peak for s in made.run.stages)
+    head_of(held, METRIC)
