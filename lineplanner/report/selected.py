@@ -10,11 +10,13 @@ from lineplanner.report.setpoints import rectifier_of
 from lineplanner.report.style import Style
 from lineplanner.report.words.names import number_of
 
+_ON_TWO_LINES = 7  # what two lines have room for: all but the density, which is in the setpoints
+
 
 def selected_lines(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[str, str]:
     """The selected part on two lines: which it is and how it hangs; what it has in the solution and takes."""
     said = [row.cells[0] for row in selected_rows(plan, style, hang, hung)]
-    return "   ".join(said[:3]), "   ".join(said[3:])
+    return "   ".join(said[:3]), "  ".join(said[3:_ON_TWO_LINES])
 
 
 def selected_rows(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[Row, ...]:
@@ -34,8 +36,9 @@ def selected_rows(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tup
     if run is not None:
         current = amperes(run.current, rectifier_of(plan), style)
         density = style.show(run.density, CURRENT_DENSITY)
-        rows.append(Row((f"{all_said}: {current} at {density}",), f"{front}.current_A"))
+        rows.append(Row((f"{all_said}: {current}",), f"{front}.current_A"))
         rows.append(Row((f"expected {style.show(run.thickness, THICKNESS)}",), f"{front}.thickness_m"))
+        rows.append(Row((f"at {density}",), f"{front}.current_A"))
     return tuple(rows)
 
 
