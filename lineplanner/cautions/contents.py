@@ -1,6 +1,7 @@
 """What the bath, the steps and the line hold, as far as a rule asks."""
 
 from collections.abc import Mapping
+from functools import lru_cache
 
 from lineplanner.cautions.facts import Chemical, MadeUp, Situation, StepKind
 from lineplanner.inputs.tables import Process
@@ -75,7 +76,12 @@ def bath_contents(situation: Situation) -> frozenset[Chemical]:
 
 def step_contents(situation: Situation) -> frozenset[Chemical]:
     """What the tanks before and after the process hold."""
-    return frozenset[Chemical]().union(*(STEP_CONTENTS[step] for step in situation.steps))
+    return _held(situation.steps)
+
+
+@lru_cache(maxsize=64)
+def _held(steps: frozenset[StepKind]) -> frozenset[Chemical]:
+    return frozenset[Chemical]().union(*(STEP_CONTENTS[step] for step in steps))
 
 
 def handled_contents(situation: Situation) -> frozenset[Chemical]:

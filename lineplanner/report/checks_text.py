@@ -12,22 +12,30 @@ from lineplanner.report.words.names import check_name, short_status
 
 # The fact that tells rows of one check apart.
 _OF = ("family", "part", "member", "role", "bar", "joint")
+HEADING = ("check", "demand", "limit", "use", "level", "limit is")
 NAME = 30  # characters of a name in the table
 _MARK = {Level.STOP: "STOP", Level.CAUTION: "CAUTION", Level.NOTE: "note", Level.OK: "ok"}
 
 
 def checks_lines(plan: Plan, style: Style) -> list[str]:
     """Every comparison: demand, limit, percent, status of the limit; then what each says that is not ok."""
-    compared = [f for f in plan.findings if f.value is not None and f.limit is not None]
-    compared.sort(key=lambda f: f.level is Level.NOTE)
-    several = {f.check for f in compared if sum(g.check == f.check for g in compared) > 1}
-    rows: list[tuple[str, ...]] = [("check", "demand", "limit", "use", "level", "limit is")]
-    rows += [_row(f, style, named=f.check in several) for f in compared]
-    lines = columns(rows, right=(1, 2, 3)) if compared else []
+    rows = [HEADING, *check_rows(plan, style).values()]
+    lines = columns(rows, right=(1, 2, 3)) if len(rows) > 1 else []
     for finding in plan.findings:
         if finding.level is not Level.OK:
             lines += said(finding, style)
     return lines
+
+
+def check_rows(plan: Plan, style: Style) -> dict[int, tuple[str, ...]]:
+    """The cells of every comparison by the place of its finding; notes last."""
+    compared = [n for n, f in enumerate(plan.findings) if f.value is not None and f.limit is not None]
+    compared.sort(key=lambda n: plan.findings[n].level is Level.NOTE)
+    checks = [plan.findings[n].check for n in compared]
+    return {
+        n: _row(plan.findings[n], style, named=checks.count(check) > 1)
+        for n, check in zip(compared, checks, strict=True)
+    }
 
 
 def _row(finding: Finding, style: Style, *, named: bool) -> tuple[str, ...]:

@@ -2,7 +2,7 @@
 
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass, replace
-from typing import Literal
+from typing import Literal, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -11,8 +11,9 @@ from lineplanner.geometry import Pose, extent, shape_of, silhouette
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.hanging import Tip, parts_hung, spots_of, tip_names, tip_places
 from lineplanner.inputs.load import Hang
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part
-from lineplanner.inputs.rack import Member
+from lineplanner.inputs.rack import Member, Rack
 from lineplanner.plan import Plan
 from lineplanner.quantities import Length
 from lineplanner.report.picture_zones import FINE, Zone, edges_of, zones_of
@@ -31,8 +32,10 @@ _EVEN: Length = 1e-9  # the level is taken to this
 _ASIDE = 2.0  # how much farther off a neighbour to the side counts than one straight ahead
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Hung:
+_MEMBERS: Memo[Rack, "list[Array]"] = Memo(64)
+
+
+class Hung(NamedTuple):
     """One part as it hangs; owner is its row in the picture, number its label, twin what hangs behind or before it.
 
     box is left, low, right and high of its outline, at its hanging point; both in m.
@@ -121,10 +124,10 @@ class Scene:
             zones[self.zone_owner[self.zone_ids] == owner] += by
         contacts[owner] += by[:2]
         left, low, right, high = (float(value) for value in np.array(hung.box) + by)
-        shifted = replace(
-            hung, at=(hung.at[0] + across, hung.at[1] + up), box=(left, low, right, high), twin=None
+        shifted = hung._replace(
+            at=(hung.at[0] + across, hung.at[1] + up), box=(left, low, right, high), twin=None
         )
-        parts = [replace(one, twin=None) if one.owner == hung.twin else one for one in self.parts]
+        parts = [one._replace(twin=None) if one.owner == hung.twin else one for one in self.parts]
         parts[owner] = shifted
         room = _around([self.extent, shifted.box])
         return replace(self, parts=tuple(parts), edges=edges, zones=zones, contacts=contacts, extent=room)
@@ -157,7 +160,7 @@ def scene_of(plan: Plan) -> Scene:
     edges = _joined([_tiled(hanging.drawn.outline, hanging.shifts) for hanging in hangs])
     lengths = [n for hanging in hangs for n in [len(hanging.drawn.outline)] * hanging.count]
     owners = np.repeat(np.arange(len(parts), dtype=np.int32), lengths)
-    members = [_member_edges(member) for member in case.rack.members]
+    members = _MEMBERS.get(case.rack, "", lambda: [_member_edges(member) for member in case.rack.members])
     tips, taken = tuple(places.values()), _taken(case.load.hangs)
     frame = (0.0, -case.rack.height, case.rack.width, 0.0)
     zones, zone_ids, zone_owner, zone_seen = _zones(hangs)
@@ -244,32 +247,36 @@ class _Hanging:
     def parts(self, first: int) -> list[Hung]:
         """Its parts, numbered on from an owner."""
         left, low, right, high = self.drawn.box
-        names, each = tip_names(self.hang), self.hang.tips_each
+        names, each, sides = tip_names(self.hang), self.hang.tips_each, self.sides
+        item, part, hang, masked = self.item, self.hang.part, self.number, self.drawn.masked
+        tips = names if each == 1 else [" ".join(names[at : at + each]) for at in range(0, len(names), each)]
         found: list[Hung] = []
+        owner = first
         for position, (x, down) in enumerate(self.spots):
-            level = round(
-                down - self.drop, 9
-            )  # of the solution above the hanging point, as the areas take it
+            # of the solution above the hanging point, as the areas take it
+            level = round(down - self.drop, 9)
             wetness: Wetness = "wet" if high <= level else "dry" if low >= level - _EVEN else "partly wet"
-            owner = first + len(found)
-            for place, side in enumerate(self.sides):
+            at, box = (x, -down), (x + left, low - down, x + right, high - down)
+            tip = tips[position] if position < len(tips) else ""
+            for place, side in enumerate(sides):
                 found.append(
                     Hung(
                         owner=owner + place,
                         number=owner + place + 1,
-                        item=self.item,
-                        part=self.hang.part,
-                        tip=" ".join(names[position * each : (position + 1) * each]),
-                        hang=self.number,
+                        item=item,
+                        part=part,
+                        tip=tip,
+                        hang=hang,
                         position=position,
                         wetness=wetness,
                         side=side,
-                        masked=self.drawn.masked,
-                        at=(x, -down),
-                        box=(x + left, low - down, x + right, high - down),
-                        twin=None if len(self.sides) == 1 else owner + 1 - place,
+                        masked=masked,
+                        at=at,
+                        box=box,
+                        twin=None if len(sides) == 1 else owner + 1 - place,
                     )
                 )
+            owner += len(sides)
         return found
 
 

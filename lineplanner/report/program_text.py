@@ -19,10 +19,25 @@ NOT_CHECKED = "not checked by this version: fit, gaps between parts, tank depth"
 
 
 def program_lines(plan: Plan, style: Style) -> list[str]:
-    """Stage, from, to, how long, amperes, volts, counter at its end, sign of the work."""
+    """The stages in columns, and what the panel holds."""
+    return [*columns(stage_rows(plan, style), right=(1, 2, 3, 4, 5, 6)), *program_notes(plan)]
+
+
+def program_notes(plan: Plan) -> list[str]:
+    """What the panel holds and when; without a program, why there is none."""
+    if plan.run is None or plan.stopped or not plan.run.stages:
+        return ["  none: a stop forbids this plan"]
+    return [f"  {text}" for text in _control_notes(plan, plan.run)]
+
+
+def stage_rows(plan: Plan, style: Style) -> list[tuple[str, ...]]:
+    """Stage, from, to, how long, amperes, volts, counter at its end, sign of the work, under a heading.
+
+    Nothing where a stop forbids the plan.
+    """
     run, process = plan.run, plan.recipe.process
     if run is None or plan.stopped or not run.stages:
-        return ["  none: a stop forbids this plan"]
+        return []
     clock = "h:min" if process == CHROME else "min"
     rows: list[tuple[str, ...]] = [
         ("stage", "from", f"to {clock}", "lasts", "amperes", "volts", "counter", "work")
@@ -49,9 +64,7 @@ def program_lines(plan: Plan, style: Style) -> list[str]:
                 work(stage.polarity),
             )
         )
-    lines = columns(rows, right=(1, 2, 3, 4, 5, 6))
-    lines += [f"  {text}" for text in _control_notes(plan, run)]
-    return lines
+    return rows
 
 
 def _span(first: str, last: str) -> str:
@@ -139,7 +152,12 @@ def areas_lines(plan: Plan, style: Style) -> list[str]:
         rows.append((name, str(len(metals)), each, *shown, ""))
     sums = (area_number(a, style) for a in (areas.wet, areas.carrying, areas.significant))
     rows.append(("together", "", "", *sums))
-    return [*columns(rows, right=(1, 2, 3, 4, 5)), f"  {NOT_CHECKED}"]
+    return [*columns(rows, right=(1, 2, 3, 4, 5)), *area_notes()]
+
+
+def area_notes() -> list[str]:
+    """What the areas do not say."""
+    return [f"  {NOT_CHECKED}"]
 
 
 def area_unit(style: Style) -> str:

@@ -2,6 +2,7 @@
 
 from collections.abc import Mapping
 from dataclasses import dataclass
+from functools import lru_cache
 
 from lineplanner import units
 from lineplanner.errors import Fact, KindOfQuantity, Quantity
@@ -60,8 +61,7 @@ class Style:
         digits: int | None = None,
     ) -> str:
         """An SI value with its unit, in the digits of its kind."""
-        text = units.show(value, KINDS[kind.name], self.system, unit=unit, step=step, digits=digits)
-        return self.marked(text)
+        return _shown(self, value, kind.name, unit, step, digits)
 
     def marked(self, text: str) -> str:
         """A shown value with the signs of this style: `50 um` or `50 µm`."""
@@ -89,6 +89,15 @@ class Style:
         return self.show(time, TIME, unit="h" if time >= LONG else None)
 
 
+@lru_cache(maxsize=4096)  # one change of a load leaves most figures as they are
+def _shown(
+    style: Style, value: float, kind: str, unit: str | None, step: float | None, digits: int | None
+) -> str:
+    text = units.show(value, KINDS[kind], style.system, unit=unit, step=step, digits=digits)
+    return style.marked(text)
+
+
+@lru_cache(maxsize=256)
 def signed(unit: str) -> str:
     """A unit with signs in place of plain letters.
 

@@ -1,6 +1,5 @@
 """Program, checks, areas, card and cautions as rows that a screen can point at."""
 
-import re
 from collections.abc import Iterator
 
 from lineplanner.findings import Finding, Level
@@ -8,7 +7,7 @@ from lineplanner.plan import Plan
 from lineplanner.quantities import AREA, RATIO, THICKNESS, Current
 from lineplanner.report.card import card_lines
 from lineplanner.report.cautions_text import by_moment
-from lineplanner.report.checks_text import checks_lines, said
+from lineplanner.report.checks_text import HEADING, check_rows, said
 from lineplanner.report.digits import (
     NONE,
     amperes,
@@ -17,7 +16,7 @@ from lineplanner.report.digits import (
 )
 from lineplanner.report.layout import WIDTH, wrapped
 from lineplanner.report.plan_text import steps_lines
-from lineplanner.report.program_text import alike, areas_lines, item_names, program_lines, thickness_lines
+from lineplanner.report.program_text import alike, item_names, program_notes, stage_rows, thickness_lines
 from lineplanner.report.rows import Row, Table
 from lineplanner.report.setpoints import caution_lines, rectifier_of
 from lineplanner.report.style import Style
@@ -33,17 +32,9 @@ BAR = 10  # characters of a full bar
 
 def program_table(plan: Plan, style: Style) -> Table:
     """The stages as the report prints them, each cell with its figure."""
-    run = plan.run
-    if run is None or plan.stopped or not run.stages:
-        return Table((), frozenset(), ())
-    heading, *lines = program_lines(plan, style)[: len(run.stages) + 1]
-    rows = [_stage(_cells(line), n, last=n == len(lines) - 1) for n, line in enumerate(lines)]
-    return Table(_cells(heading), frozenset(range(1, 7)), tuple(rows))
-
-
-def _cells(line: str) -> tuple[str, ...]:
-    """The cells of a printed row: none is empty, two blanks or more stand between them."""
-    return tuple(re.split(r" {2,}", line.strip()))
+    heading, *listed = stage_rows(plan, style) or [()]
+    rows = [_stage(cells, n, last=n == len(listed) - 1) for n, cells in enumerate(listed)]
+    return Table(heading, frozenset(range(1, 7)) if rows else frozenset(), tuple(rows))
 
 
 def _stage(cells: tuple[str, ...], place: int, *, last: bool) -> Row:
@@ -54,12 +45,10 @@ def _stage(cells: tuple[str, ...], place: int, *, last: bool) -> Row:
     return Row(cells, f"{path}.to_A", paths=paths)
 
 
-def program_notes(plan: Plan, style: Style) -> list[str]:
+def program_said(plan: Plan, style: Style) -> list[str]:
     """What stands below the stages: what the panel holds, the thickness with its band, the side steps."""
-    lines = program_lines(plan, style)
-    notes = lines[len(plan.run.stages) + 1 :] if plan.run is not None and len(lines) > 1 else lines
     return [
-        *notes,
+        *program_notes(plan),
         "",
         *thickness_lines(plan, style),
         *([""] if plan.recipe.before else []),
@@ -75,15 +64,10 @@ _USE = 3  # the column that the bar stands behind
 
 def checks_table(plan: Plan, style: Style) -> Table:
     """Every check, gravest and tightest first, notes last; comparisons as the report prints them."""
+    cells = check_rows(plan, style)
     order = sorted(range(len(plan.findings)), key=lambda n: plan.findings[n].level is Level.NOTE)
-    compared = [n for n in order if _is_compared(plan.findings[n])]
-    printed = checks_lines(plan, style)[: len(compared) + 1] if compared else [_NO_COMPARISON]
-    cells = dict(zip(compared, map(_cells, printed[1:]), strict=True))
     rows = tuple(_check(plan, n, cells.get(n) or _uncompared(plan.findings[n]), style) for n in order)
-    return Table(_with_bar(_cells(printed[0]), ""), frozenset({1, 2, 3}), rows)
-
-
-_NO_COMPARISON = "check  demand  limit  use  level  limit is"
+    return Table(_with_bar(HEADING, ""), frozenset({1, 2, 3}), rows)
 
 
 def _is_compared(finding: Finding) -> bool:
@@ -189,11 +173,6 @@ def _metals(plan: Plan, style: Style) -> Iterator[Row]:
             name = f"{metals[0].name}{to} ({surface_word(metals[0].why)})"
             each = style.show(metals[0].area, AREA)
             yield Row((name, str(len(metals)), shown, share, "", "", style.show(wet, AREA), each, ""), path)
-
-
-def areas_notes(plan: Plan, style: Style) -> list[str]:
-    """What the report says below the areas."""
-    return areas_lines(plan, style)[len(areas_table(plan, style).rows) + 1 :]
 
 
 # --- card and cautions -----------------------------------------------------------------------------------

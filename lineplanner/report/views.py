@@ -76,7 +76,7 @@ def _pieces(line: str, paths: Mapping[str, str]) -> Line:
 
 def item_paths(plan: Plan, style: Style) -> dict[str, str]:
     """The items of the setpoint lines with the figure that each prints."""
-    run, told = plan.run, stories(plan)
+    run = plan.run
     if run is None or plan.stopped or run.total_time is None:
         return {}
     process, rectifier = plan.recipe.process, run.rectifier
@@ -105,7 +105,7 @@ def item_paths(plan: Plan, style: Style) -> dict[str, str]:
         found[amperes(run.panel_current, rectifier, style)] = "current.panel_set_A"
     if plan.recipe.current_density is not None:
         found[style.show(plan.recipe.current_density.value, CURRENT_DENSITY)] = "current.density_A_per_m2"
-    return {text: path for text, path in found.items() if path in told}
+    return {text: path for text, path in found.items() if path in plan.figures}
 
 
 def _lead_in_paths(plan: Plan, style: Style) -> Iterator[tuple[str, str]]:

@@ -15,6 +15,7 @@ from typing import TYPE_CHECKING, ClassVar
 from textual import events
 from textual.app import App
 from textual.binding import Binding, BindingType
+from textual.widgets import Input
 
 from lineplanner.errors import PlannerError
 from lineplanner.files.library import Library
@@ -95,7 +96,12 @@ class PlannerApp(App[int], inherit_bindings=False):
             self.screen.say(text, grave=grave)
 
     async def on_event(self, event: events.Event) -> None:
-        if isinstance(event, events.Key) and isinstance(self.screen, PlannerScreen):
+        # A key comes by twice, the second time when it is acted on: one repaint then. A field may keep it.
+        if (
+            isinstance(event, events.Key)
+            and isinstance(self.screen, PlannerScreen)
+            and (event.is_forwarded or isinstance(self.focused, Input))
+        ):
             self.screen.key_comes()
         await super().on_event(event)
 
@@ -159,6 +165,8 @@ class PlannerApp(App[int], inherit_bindings=False):
 
     def action_units(self) -> None:
         """Metric or US, on every screen at once."""
+        if isinstance(self.screen, PlannerScreen):
+            self.screen.key_comes()
         self.session.toggle_units()
         for screen in self.screen_stack:
             retell = getattr(screen, "retell", None)

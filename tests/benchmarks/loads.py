@@ -10,11 +10,11 @@ from lineplanner.inputs.case import Case
 from lineplanner.inputs.load import Hang
 from lineplanner.inputs.rack import Spot, TipRow
 
-_PARTS_BY_NAME = {"valve-block": 80, "test-coupon": 60, "hose-adapter": 60}  # the block has seven holes
-_MATERIAL = "6061-t6"
-_ROWS, _IN_ROW = 10, 21  # a tip to spare in each row, so that a part can move without a change of level
-_LEFT, _ACROSS = 0.05, 0.1
-_TOP, _DOWN = 0.32, 0.16
+PARTS_BY_NAME = {"valve-block": 80, "test-coupon": 60, "hose-adapter": 60}  # the block has seven holes
+MATERIAL = "6061-t6"
+ROWS, IN_ROW = 10, 21  # a tip to spare in each row, so that a part can move without a change of level
+LEFT, ACROSS = 0.05, 0.1
+TOP, DOWN = 0.32, 0.16
 _CUT = 0.35  # solution drop that cuts every part of the upper row
 _STAGGER = 0.002  # free positions of a row lie apart in height, so that a level cuts each one differently
 
@@ -24,30 +24,30 @@ def tips_case(library: Library) -> Case:
     rows = tuple(
         TipRow(
             name=chr(ord("A") + row),
-            count=_IN_ROW,
-            start=(_LEFT, _TOP + row * _DOWN),
-            step=(_ACROSS, 0.0),
+            count=IN_ROW,
+            start=(LEFT, TOP + row * DOWN),
+            step=(ACROSS, 0.0),
             kind="spring",
             conductor="titanium-2",
             contacts=2,
             bare_area=3e-4,
             side="both",
         )
-        for row in range(_ROWS)
+        for row in range(ROWS)
     )
-    names = [f"{row.name}{number + 1}" for row in rows for number in range(_IN_ROW - 1)]
-    hangs = tuple(Hang(part=part, material=_MATERIAL, tips=tuple(tips)) for part, tips in _shared(names))
+    names = [f"{row.name}{number + 1}" for row in rows for number in range(IN_ROW - 1)]
+    hangs = tuple(Hang(part=part, material=MATERIAL, tips=tuple(tips)) for part, tips in _shared(names))
     return _case(library, hangs, tips=rows, hanging="tips")
 
 
 def free_case(library: Library) -> Case:
     """200 parts at free positions, no two of a row at the same height."""
     spots: list[Spot] = [
-        (_LEFT + number * _ACROSS, _TOP + row * _DOWN + number * _STAGGER)
-        for row in range(_ROWS)
-        for number in range(_IN_ROW - 1)
+        (LEFT + number * ACROSS, TOP + row * DOWN + number * _STAGGER)
+        for row in range(ROWS)
+        for number in range(IN_ROW - 1)
     ]
-    hangs = tuple(Hang(part=part, material=_MATERIAL, at=tuple(at)) for part, at in _shared(spots))
+    hangs = tuple(Hang(part=part, material=MATERIAL, at=tuple(at)) for part, at in _shared(spots))
     return _case(library, hangs, tips=(), hanging="free")
 
 
@@ -56,7 +56,7 @@ def moved(case: Case, turn: int) -> Case:
     first = case.load.hangs[0]
     if first.tips:
         row = first.tips[0][0]
-        place = f"{row}{_IN_ROW}" if turn % 2 else first.tips[0]
+        place = f"{row}{IN_ROW}" if turn % 2 else first.tips[0]
         hang = replace(first, tips=(place, *first.tips[1:]))
     else:
         (x, drop), *others = first.at
@@ -96,7 +96,7 @@ def _with(case: Case, first: Hang) -> Case:
 
 def _shared(places: list[Any]) -> Iterator[tuple[str, list[Any]]]:
     begin = 0
-    for part, count in _PARTS_BY_NAME.items():
+    for part, count in PARTS_BY_NAME.items():
         yield part, places[begin : begin + count]
         begin += count
 
@@ -107,5 +107,5 @@ def _case(library: Library, hangs: tuple[Hang, ...], **rack: Any) -> Case:
         case,
         load=replace(case.load, hangs=hangs),
         rack=replace(case.rack, **rack),
-        parts={part: library.record("part", part) for part in _PARTS_BY_NAME},
+        parts={part: library.record("part", part) for part in PARTS_BY_NAME},
     )

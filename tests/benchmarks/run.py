@@ -7,12 +7,19 @@
 import platform
 import sys
 
+import gestures
 import replan
 import screens
 import startup
 import text
 
-BENCHMARKS = {"startup": startup.run, "text": text.run, "replan": replan.run, "screens": screens.run}
+BENCHMARKS = {
+    "startup": startup.run,
+    "text": text.run,
+    "replan": replan.run,
+    "screens": screens.run,
+    "gestures": gestures.run,
+}
 
 
 def main(names: list[str]) -> int:

@@ -4,15 +4,14 @@ What needs a pseudo-terminal (keys, start) runs on POSIX alone.
 """
 
 import os
-import select
 import statistics
-import subprocess
 import sys
 import tempfile
 import time
-from collections.abc import Callable, Iterator
+from collections.abc import Callable
 from pathlib import Path
 
+from at_terminal import Screen
 from loads import tips_case
 from timing import Times, Turn, measured, show_ratios, show_times
 
@@ -41,8 +40,6 @@ class Bare(App):
 Bare().run()
 """
 _SHOP = Path(__file__).parents[2]
-_WAIT = 10.0  # seconds until a screen that does not answer is given up
-_QUIET = 0.05  # seconds without output after which a repaint is over
 
 
 def run() -> None:
@@ -157,73 +154,9 @@ def _started(command: list[str], marks: list[str], home: Path | str, stay: float
     begin = time.perf_counter()
     screen = Screen(command, (80, 24), own)
     found = [screen.seen(mark) - begin for mark in marks]
-    end = time.perf_counter() + stay
-    while time.perf_counter() < end:
-        screen.drain()
+    screen.settle(stay)
     screen.close()
     return found
-
-
-class Screen:
-    """An app on a pseudo-terminal of its own."""
-
-    def __init__(self, command: list[str], size: tuple[int, int], own: dict[str, str] | None = None) -> None:
-        import fcntl
-        import pty
-        import struct
-        import termios
-
-        self.master, slave = pty.openpty()
-        fcntl.ioctl(slave, termios.TIOCSWINSZ, struct.pack("HHHH", size[1], size[0], 0, 0))
-        env = {**os.environ, "TERM": "xterm-256color", "COLORTERM": "truecolor", "TEXTUAL_ANIMATIONS": "none"}
-        self.all = b""
-        self.child = subprocess.Popen(
-            command, stdin=slave, stdout=slave, stderr=slave, env=env | (own or {}), start_new_session=True
-        )
-        os.close(slave)
-
-    def press(self, key: str, answer: str) -> tuple[float, int]:
-        """Seconds until the answer is on the terminal, and how many bytes the repaint took in all."""
-        begin = time.perf_counter()
-        os.write(self.master, key.encode())
-        size = self._until(answer)
-        took = time.perf_counter() - begin
-        return took, size + sum(len(more) for more in self._read(_QUIET))
-
-    def seen(self, text: str) -> float:
-        """The time at which a text was on the terminal for the first time."""
-        end = time.perf_counter() + _WAIT
-        while text.encode() not in self.all:
-            if time.perf_counter() > end:
-                raise TimeoutError(text)
-            self.drain()
-        return time.perf_counter()
-
-    def drain(self) -> None:
-        """Take what there is to read, waiting a moment for it."""
-        if select.select([self.master], [], [], 0.01)[0]:
-            self.all += os.read(self.master, 1 << 16)
-
-    def close(self) -> None:
-        """End the app."""
-        self.child.kill()
-        self.child.wait()
-        os.close(self.master)
-
-    def _until(self, answer: str) -> int:
-        seen, end = b"", time.perf_counter() + _WAIT
-        while answer.encode() not in seen:
-            if time.perf_counter() > end:
-                raise TimeoutError(answer)
-            for more in self._read(0.01):
-                seen += more
-                if answer.encode() in seen:
-                    break
-        return len(seen)
-
-    def _read(self, quiet: float) -> Iterator[bytes]:
-        while select.select([self.master], [], [], quiet)[0]:
-            yield os.read(self.master, 1 << 16)
 
 
 def child(kind: str) -> None:

@@ -16,19 +16,18 @@ from lineplanner.report.listing import list_load, listed, said_below
 from lineplanner.report.picture import scene_of
 from lineplanner.report.plan_json import numeric_leaves, plan_record
 from lineplanner.report.plan_text import recipe_said
-from lineplanner.report.program_text import areas_lines, program_lines
+from lineplanner.report.program_text import area_notes, areas_lines, program_lines
 from lineplanner.report.rows import Row, Table
 from lineplanner.report.selected import item_of, selected_rows
 from lineplanner.report.setpoints import caution_line, setpoint_lines, verdict_line
 from lineplanner.report.style import Style
 from lineplanner.report.view_tables import (
-    areas_notes,
     areas_table,
     card_rows,
     caution_rows,
     check_said,
     checks_table,
-    program_notes,
+    program_said,
     program_table,
 )
 from lineplanner.report.views import head_of, title_text, why_lines, why_title
@@ -95,10 +94,10 @@ def test_the_stages_are_those_of_the_program_as_text(made: Plan) -> None:
         if table.rows:
             assert as_lines(table) == lines[: len(table.rows) + 1]
             assert (
-                program_notes(made, style)[: len(lines) - len(table.rows) - 1] == lines[len(table.rows) + 1 :]
+                program_said(made, style)[: len(lines) - len(table.rows) - 1] == lines[len(table.rows) + 1 :]
             )
         else:
-            assert program_notes(made, style)[: len(lines)] == lines
+            assert program_said(made, style)[: len(lines)] == lines
 
 
 @every_plan
@@ -109,8 +108,10 @@ def test_the_checks_are_those_of_the_report_with_the_rest_among_them(made: Plan)
     for row in table.rows:
         finding = made.findings[int(str(row.path)[9:].partition("]")[0])]
         if finding.value is not None and finding.limit is not None:
-            cells = " ".join(cell for place, cell in enumerate(row.cells) if place != 4)
-            assert cells in printed, row
+            name, *cells = (cell for place, cell in enumerate(row.cells) if place != 4)
+            lines = [line for line in printed if line.endswith(" ".join(cells))]
+            # where the report's table would be too wide it cuts names in their middle
+            assert any(line.startswith(name) or ".." in line for line in lines), row
 
 
 def test_a_bar_is_full_at_the_limit_and_never_before() -> None:
@@ -129,7 +130,7 @@ def test_a_bar_is_full_at_the_limit_and_never_before() -> None:
 def test_the_areas_are_those_of_the_report(made: Plan) -> None:
     for style in STYLES:
         table, lines = areas_table(made, style), areas_lines(made, style)[1:]
-        assert areas_notes(made, style) == lines[len(table.rows) :]
+        assert area_notes() == lines[len(table.rows) :]
         for row, line in zip(table.rows, lines, strict=False):
             for place in (1, 2, 6, 7, 8):
                 assert row.cells[place].partition(" ")[0] in line.split() or not row.cells[place]

@@ -234,7 +234,7 @@ def test_parts_on_the_back_are_marked() -> None:
     assert "b on the back" in text
     assert "b on the back" not in "\n".join(lines(cells(scene("valve-blocks-24"))))
     alone = scene("vent-panels-24")
-    back = replace(alone, parts=tuple(replace(h, side="back", twin=None) for h in alone.parts))
+    back = replace(alone, parts=tuple(h._replace(side="back", twin=None) for h in alone.parts))
     assert re.search(r"\b24b\b", "\n".join(lines(cells(back))))
 
 

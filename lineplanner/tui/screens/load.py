@@ -104,7 +104,8 @@ class LoadScreen(PlannerScreen):
         demo = "   (demo)" if self.session.packaged else ""
         room = max(self.size.width - len(unsaved) - len(demo) - 2, 20)
         text = f" {title_text(self.session.plan, room)}{unsaved}{demo}"
-        self.query_one("#title", Static).update(Content(tidy(text, ascii_only=self.session.style.ascii)))
+        title = Content(tidy(text, ascii_only=self.session.style.ascii))
+        self.query_one("#title", Static).update(title, layout=False)
 
     def key_comes(self) -> None:
         super().key_comes()

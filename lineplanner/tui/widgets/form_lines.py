@@ -9,10 +9,10 @@ from rich.segment import Segment
 from textual.events import Click
 from textual.message import Message
 from textual.strip import Strip
-from textual.widget import Widget
 
 from lineplanner.report.form_rows import Heading, Row
 from lineplanner.tui.sheet import Line
+from lineplanner.tui.widgets.kept_lines import KeptLines
 from lineplanner.tui.widgets.text import fitted, tidy
 
 _DEEPEST = 4  # levels that are set in; deeper ones stand under these
@@ -41,7 +41,7 @@ def _said(line: Line, row: Row) -> str:
     return "".join(f"   {word}" for word in (row.elsewise, row.mark) if word)
 
 
-class FormLines(Widget):
+class FormLines(KeptLines):
     """Some lines of a form, one row of cells each."""
 
     ALLOW_SELECT = False
@@ -66,15 +66,15 @@ class FormLines(Widget):
         if self._height != height:
             self._height = self.styles.height = height
         self.display = height > 0
-        self.refresh()
+        self.redraw()
 
-    def render_line(self, y: int) -> Strip:
-        width, base = self.size.width, self.rich_style
+    def draw_line(self, y: int) -> Strip:
+        width, base = self.size.width, self.look()
         if y >= len(self._lines):
             return Strip([Segment(" " * width, base)], width)
         line = self._lines[y]
         part = self._part(line)
-        style = self.get_component_rich_style(f"form--{part}") if part else base
+        style = self.look(f"form--{part}") if part else base
         return Strip([Segment(drawn(line, width, ascii_only=self.ascii), style)], width)
 
     def _part(self, line: Line) -> str:

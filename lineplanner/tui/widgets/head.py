@@ -8,9 +8,9 @@ from rich.segment import Segment
 from rich.style import Style
 from textual.binding import Binding, BindingType
 from textual.strip import Strip
-from textual.widget import Widget
 
 from lineplanner.report.rows import Head, Line, Piece
+from lineplanner.tui.widgets.kept_lines import KeptLines
 from lineplanner.tui.widgets.text import tidy
 
 _TONES = {"stop": "danger", "caution": "caution"}
@@ -18,7 +18,7 @@ _WORDS = {"DANGER": "danger", "WARNING": "warning", "CAUTION": "caution", "NOTIC
 _EMPTY = Head((), Piece(""), "", "", "")
 
 
-class HeadLines(Widget, can_focus=True):
+class HeadLines(KeptLines, can_focus=True):
     """Setpoints, verdict, caution. With the focus here, left and right choose a figure to ask about."""
 
     ALLOW_SELECT = False
@@ -46,13 +46,13 @@ class HeadLines(Widget, can_focus=True):
             self.styles.height = len(self._lines(head))
         self.head, self.moved = head, moved
         self.chosen = min(self.chosen, max(0, len(self._figures) - 1))
-        self.refresh()
+        self.redraw()
 
     def unmark(self) -> None:
         """Take the marks of a change away."""
         if self.moved:
             self.moved = frozenset()
-            self.refresh()
+            self.redraw_later()
 
     @property
     def path(self) -> str | None:
@@ -70,14 +70,14 @@ class HeadLines(Widget, can_focus=True):
 
     def action_across(self, step: int) -> None:
         self.chosen = max(0, min(self.chosen + step, len(self._figures) - 1))
-        self.refresh()
+        self.redraw()
 
     # --- drawing -----------------------------------------------------------------------------------------
 
-    def render_line(self, y: int) -> Strip:
+    def draw_line(self, y: int) -> Strip:
         width, lines = self.size.width, self._lines(self.head)
         if y >= len(lines):
-            return Strip([Segment(" " * width, self.rich_style)], width)
+            return Strip([Segment(" " * width, self.look())], width)
         base = self._base(y)
         segments = [Segment(" ", base)]
         for piece in lines[y]:
@@ -90,17 +90,17 @@ class HeadLines(Widget, can_focus=True):
     def _base(self, y: int) -> Style:
         count = len(self.head.setpoints)
         if y < count:
-            return self.get_component_rich_style("head--set")
+            return self.look("head--set")
         if y == count:
-            return self.get_component_rich_style(f"head--{_TONES.get(self.head.level, 'ok')}")
-        return self.get_component_rich_style(f"head--{_WORDS.get(self.head.caution_word, 'note')}")
+            return self.look(f"head--{_TONES.get(self.head.level, 'ok')}")
+        return self.look(f"head--{_WORDS.get(self.head.caution_word, 'note')}")
 
     def _marked(self, piece: Piece, base: Style) -> tuple[str, Style]:
         """The mark before a piece and its style: chosen to be asked about, or moved by the last edit."""
         if piece.path is None:
             return "", base
         if self.has_focus and self._figures and self._figures[self.chosen] is piece:
-            return ">", self.get_component_rich_style("head--chosen")
+            return ">", self.look("head--chosen")
         if piece.path in self.moved:
-            return "*", self.get_component_rich_style("head--changed")
+            return "*", self.look("head--changed")
         return "", base

@@ -6,8 +6,8 @@ from typing import ClassVar
 
 from rich.segment import Segment
 from textual.strip import Strip
-from textual.widget import Widget
 
+from lineplanner.tui.widgets.kept_lines import KeptLines
 from lineplanner.tui.widgets.text import fitted, tidy
 
 LAST = ("ctrl+p", "all commands")
@@ -30,7 +30,7 @@ def key_said(key: str) -> str:
     return shown.upper() if shown[0] == "f" and shown[1:].isdigit() else shown
 
 
-class Hints(Widget):
+class Hints(KeptLines):
     """Hints from the bindings in force, as many as fit; `say` puts a sentence in their place."""
 
     ALLOW_SELECT = False
@@ -43,13 +43,13 @@ class Hints(Widget):
         self.said, self.grave = "", False
 
     def on_mount(self) -> None:
-        self.screen.bindings_updated_signal.subscribe(self, lambda _: self.refresh())
+        self.screen.bindings_updated_signal.subscribe(self, lambda _: self.redraw())
 
     def say(self, text: str, *, grave: bool = False) -> None:
         """Say something until the next key."""
         if text or self.said:
             self.said, self.grave = text, grave
-            self.refresh()
+            self.redraw()
 
     def _hints(self) -> list[tuple[str, str]]:
         """Key and what it does, each action once, in the order of the bindings."""
@@ -60,13 +60,13 @@ class Hints(Widget):
                 found.setdefault(active.binding.action, (key_said(key), active.binding.description))
         return list(found.values())
 
-    def render_line(self, y: int) -> Strip:
-        width, base = self.size.width, self.rich_style
+    def draw_line(self, y: int) -> Strip:
+        width, base = self.size.width, self.look()
         if self.said and y == 0:
-            style = self.get_component_rich_style("hints--grave" if self.grave else "hints--said")
+            style = self.look("hints--grave" if self.grave else "hints--said")
             return Strip([Segment(fitted(f" {tidy(self.said, ascii_only=self.ascii)}", width), style)], width)
         segments = [Segment(" ", base)]
-        key_style = self.get_component_rich_style("hints--key")
+        key_style = self.look("hints--key")
         left = width - 1 - len(" ".join(LAST))
         for key, text in (*self.first, *self._hints()) if y == 0 else ():
             size = len(key) + len(text) + 3

@@ -10,11 +10,11 @@ from rich.style import Style as RichStyle
 from textual import events
 from textual.binding import Binding, BindingType
 from textual.strip import Strip
-from textual.widget import Widget
 
 from lineplanner.report.plot import Plot, Series
 from lineplanner.report.style import plain
 from lineplanner.tui.widgets import raster
+from lineplanner.tui.widgets.kept_lines import KeptLines
 
 Read = Callable[[float], str]
 
@@ -29,7 +29,7 @@ _LEAST_COLUMNS = 10
 _TEN = 10
 
 
-class ProgramPlot(Widget, can_focus=True):
+class ProgramPlot(KeptLines, can_focus=True):
     """Draws a plot; left and right move the cursor, and a click does.
 
     reader gives the text of the cursor's line for a share of the time; on_read is called with that share.
@@ -123,17 +123,17 @@ class ProgramPlot(Widget, can_focus=True):
         super().notify_style_update()
         self._lines = []
 
-    def render_line(self, y: int) -> Strip:
+    def draw_line(self, y: int) -> Strip:
         """One line of the plot; all are made at once."""
         if not self._lines and self.size.area:
             self._lines = self._made()
-        return self._lines[y] if y < len(self._lines) else Strip.blank(self.size.width, self.rich_style)
+        return self._lines[y] if y < len(self._lines) else Strip.blank(self.size.width, self.look())
 
     # --- inside ------------------------------------------------------------------------------------------
 
     def _redraw(self) -> None:
         self._lines = []
-        self.refresh()
+        self.redraw()
 
     @property
     def _margin(self) -> int:
@@ -152,7 +152,7 @@ class ProgramPlot(Widget, can_focus=True):
             page.write(0, 0, "" if self.plot is None else self.plot.why, _TEXT)
         else:
             self._draw(page, self.plot)
-        styles = [self.get_component_rich_style(name) for name in _CLASSES]
+        styles = [self.look(name) for name in _CLASSES]
         return [page.strip(row, styles) for row in range(height)]
 
     def _draw(self, page: "_Page", plot: Plot) -> None:
@@ -192,8 +192,7 @@ class ProgramPlot(Widget, can_focus=True):
         """One curve with its axis: highest and lowest value at the side, its name in the first row."""
         if series.limit is not None:
             row = top + min(int((1.0 - series.limit) * rows), rows - 1)
-            for column in range(self._margin, page.width):
-                page.put(column, row, "-", _LIMIT)
+            page.rule(self._margin, row, "-", _LIMIT)
         page.curve(self._margin, top, self._width, rows, np.array(series.points), ink)
         page.write(0, top, series.top.rjust(self._margin - 1), _AXIS)
         page.write(0, top + rows - 1, series.bottom.rjust(self._margin - 1), _AXIS)
@@ -228,15 +227,22 @@ class _Page:
             self.codes[row, column] = ord(letter)
         self.inks[row, column] = ink
 
+    def rule(self, column: int, row: int, letter: str, ink: int) -> None:
+        """A line of one character from a column to the edge, under all that is there."""
+        if 0 <= row < self.height:
+            free = self.codes[row, column:] == ord(" ")
+            self.codes[row, column:][free] = ord(letter)
+            self.inks[row, column:] = ink
+
     def write_free(self, column: int, top: int, rows: int, text: str, ink: int) -> None:
         """Text in the first row of a strip that has room for it beside the curve, else nowhere."""
         for row in range(top, top + rows):
-            for start in range(column, self.width - len(text) + 1):
-                cells = slice(start, start + len(text))
-                free = (self.codes[row, cells] == ord(" ")) | (self.inks[row, cells] == _LIMIT)
-                if free.all():
-                    self.write(start, row, text, ink)
-                    return
+            taken = (self.codes[row, column:] != ord(" ")) & (self.inks[row, column:] != _LIMIT)
+            busy = np.concatenate(([0], np.cumsum(taken)))
+            free = np.flatnonzero(busy[len(text) :] == busy[: max(len(busy) - len(text), 0)])
+            if len(free):
+                self.write(column + int(free[0]), row, text, ink)
+                return
 
     def curve(
         self, left: int, top: int, columns: int, rows: int, points: NDArray[np.float64], ink: int

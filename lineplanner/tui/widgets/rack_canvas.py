@@ -73,8 +73,10 @@ class RackCanvas(Widget, can_focus=True):
         self.selected: int | None = None
         self._view: View | None = None  # None: fitted
         self._cells: Cells | None = None
-        self._codes: Codes | None = None
+        self._codes: Codes = np.empty((0, 0), dtype=np.uint32)
+        self._inks: Indices = np.empty((0, 0), dtype=np.int32)
         self._strips: list[Strip | None] = []
+        self._styled: tuple[list[RichStyle], Indices] | None = None
         self._marked: tuple[int, int, int, int] | None = None
 
     # --- what is shown -----------------------------------------------------------------------------------
@@ -85,8 +87,12 @@ class RackCanvas(Widget, can_focus=True):
             self._view = None
         self.scene = scene
         self.selected = self._known(selected)
+        before = None if self._cells is None else (self._codes, self._inks)
         self._forget()
-        self.refresh()
+        if before is None or self._built() is None:
+            self.refresh()
+        else:
+            self._refresh_changed(*before)
 
     def select(self, owner: int | None) -> None:
         """Select a part without telling on_pick; repaints the cells of the old and the new one only."""
@@ -177,7 +183,7 @@ class RackCanvas(Widget, can_focus=True):
     def notify_style_update(self) -> None:
         """A theme change: the same cells in other colours."""
         super().notify_style_update()
-        self._strips = [None] * len(self._strips)
+        self._strips, self._styled = [None] * len(self._strips), None
 
     def render_line(self, y: int) -> Strip:
         """One line of the picture, kept until it changes."""
@@ -206,7 +212,7 @@ class RackCanvas(Widget, can_focus=True):
         self.refresh()
 
     def _forget(self) -> None:
-        self._cells, self._codes, self._marked, self._strips = None, None, None, []
+        self._cells, self._marked, self._strips = None, None, []
 
     def _seen(self) -> View:
         """The view of the present size."""
@@ -224,6 +230,18 @@ class RackCanvas(Widget, can_focus=True):
             self._mark()
         return self._cells
 
+    def _refresh_changed(self, codes: Codes, inks: Indices) -> None:
+        """Repaint the cells that are others than before: rows that follow each other as one region."""
+        if codes.shape != self._codes.shape:
+            self.refresh()
+            return
+        other = (codes != self._codes) | (inks != self._inks)
+        rows = np.flatnonzero(other.any(axis=1))
+        for run in np.split(rows, np.flatnonzero(np.diff(rows) > 1) + 1) if len(rows) else ():
+            columns = np.flatnonzero(other[run].any(axis=0))
+            box = (int(columns[0]), int(run[0]), int(columns[-1]) + 1, int(run[-1]) + 1)
+            self.refresh(Region.from_corners(*box))
+
     def _mark(self) -> None:
         assert self._cells is not None
         self._codes, inks, self._marked = self._cells.with_selected(self.selected)
@@ -231,7 +249,6 @@ class RackCanvas(Widget, can_focus=True):
 
     def _strip(self, y: int) -> Strip:
         """A row as runs of one ink."""
-        assert self._codes is not None
         styles, same = self._styles()
         codes, inks = self._codes[y], same[self._inks[y]]
         ends = [*(np.flatnonzero(np.diff(inks)) + 1).tolist(), len(inks)]
@@ -245,8 +262,10 @@ class RackCanvas(Widget, can_focus=True):
 
     def _styles(self) -> tuple[list[RichStyle], Indices]:
         """The style of each ink, and of each ink the first that looks the same: fewer runs, fewer bytes."""
-        styles = [self.get_component_rich_style(name) for name in _CLASSES]
-        return styles, np.array([styles.index(style) for style in styles], dtype=np.int32)
+        if self._styled is None:
+            styles = [self.get_component_rich_style(name) for name in _CLASSES]
+            self._styled = styles, np.array([styles.index(style) for style in styles], dtype=np.int32)
+        return self._styled
 
 
 def _joined_blanks(codes: Codes, inks: Indices) -> Indices:

@@ -175,11 +175,13 @@ class Cells:
             codes = np.where(rack, bars[self._longest(crossed)], BLANK)
             codes = np.where(dots, np.where(inks == Ink.DRY, ord("."), ord("#")), codes)
         else:
-            thin = np.repeat(np.repeat(inks == Ink.DRY, down, axis=0), across, axis=1)
-            thin[(np.add.outer(np.arange(len(dots)), np.arange(dots.shape[1])) % 2) == 0] = False
-            codes = raster.packed((dots & ~thin) | rack)
+            if (inks == Ink.DRY).any():
+                thin = np.repeat(np.repeat(inks == Ink.DRY, down, axis=0), across, axis=1)
+                thin[(np.add.outer(np.arange(len(dots)), np.arange(dots.shape[1])) % 2) == 0] = False
+                dots &= ~thin
+            codes = raster.packed(dots | rack)
         self.codes = codes.astype(np.uint32)
-        lines = rack.reshape(view.rows, down, view.columns, across).any(axis=(1, 3))
+        lines = rack if self.ascii_only else raster.packed(rack) != BLANK
         self.inks = np.where(self.outlined != NOBODY, inks, np.where(lines, Ink.RACK, Ink.GROUND)).astype(
             np.uint8
         )
@@ -305,17 +307,17 @@ class Cells:
             line = _narrow(plain(said) if self.ascii_only else said)
             self._text(1 if self.view.columns > len(line) else 0, row, line, Ink.NOTE)
         if rows >= _KEY_ROWS:
-            lines = [f"{mark} {text}" for mark, text in _KEY.items() if self._shows(mark)]
+            shown = self._marks()
+            lines = [f"{mark} {text}" for mark, text in _KEY.items() if mark in shown]
             for row, line in zip(range(rows - len(lines), rows), lines, strict=True):
                 if (self.codes[row, 1 : len(line) + 2] == BLANK).all():
                     self._text(1, row, line, Ink.NOTE)
 
-    def _shows(self, mark: str) -> bool:
-        """Whether a mark of the key stands in the picture."""
-        if mark == "b":
-            return any(hung.side == "back" for hung in self.scene.parts)
-        marks = np.isin(self.inks, (Ink.MASKED, Ink.TIP, Ink.DRY, Ink.FRAME))
-        return bool((marks & (self.codes == ord(mark))).any())
+    def _marks(self) -> set[str]:
+        """The marks of the key that stand in the picture."""
+        marked = np.isin(self.inks, (Ink.MASKED, Ink.TIP, Ink.DRY, Ink.FRAME))
+        back = {"b"} if any(hung.side == "back" for hung in self.scene.parts) else set()
+        return {chr(code) for code in np.unique(self.codes[marked])} - {"b"} | back
 
     def _gap(self, row: int, text: str) -> int:
         """The first column from which a text covers no part, else the first."""
@@ -343,6 +345,6 @@ def _narrow(text: str) -> str:
 
 
 def _write(codes: Codes, inks: Inks, column: int, row: int, text: str, ink: Ink) -> None:
-    letters = np.array([ord(letter) for letter in text], dtype=np.uint32)[: codes.shape[1] - column]
+    letters = np.frombuffer(text.encode("utf-32-le"), dtype="<u4")[: codes.shape[1] - column]
     codes[row, column : column + len(letters)] = letters
     inks[row, column : column + len(letters)] = ink

@@ -18,7 +18,7 @@ Box = tuple[float, float, float, float]
 ACROSS, DOWN = 2, 4
 NOBODY = -1
 BRAILLE = 0x2800
-_BITS = np.array([[0x01, 0x08], [0x02, 0x10], [0x04, 0x20], [0x40, 0x80]], dtype=np.uint32)
+_BITS = ((0, 3), (1, 4), (2, 5), (6, 7))  # of a dot by row and column in its cell (Unicode, braille patterns)
 _DEEPEST, _FARTHEST = 1e9, 1e-9  # dots per unit: no zoom goes beyond
 
 
@@ -74,12 +74,11 @@ def outline(
     width, height = columns * across, rows * down
     dots = np.zeros((height, width), dtype=bool)
     owned = np.full((rows, columns), NOBODY, dtype=np.int32)
-    inside, kept = _clipped(edges, width, height)
-    x0, y0, x1, y1 = np.ascontiguousarray(inside.T)
+    (x0, y0, x1, y1), kept = _clipped(edges, width, height)
     # Steps of less than a dot: a step of just one would leave out a dot where rounding takes it back.
     counts = np.maximum(np.abs(x1 - x0), np.abs(y1 - y0)).astype(np.int64) + 2
     counts[(np.floor(x0) == np.floor(x1)) & (np.floor(y0) == np.floor(y1))] = 1
-    which = np.repeat(np.arange(len(inside)), counts)
+    which = np.repeat(np.arange(len(kept)), counts)
     share = np.arange(len(which)) - np.repeat(np.cumsum(counts) - counts, counts)
     share = share / np.maximum(counts - 1, 1)[which]
     x = np.clip((x0[which] + share * (x1 - x0)[which]).astype(np.int64), 0, width - 1)
@@ -113,9 +112,12 @@ def fill(edges: Array, owners: Indices, width: int, height: int) -> Indices:
 
 def packed(dots: Flags) -> Codes:
     """Dots as braille characters, blank cells as spaces: code points of shape (rows, columns)."""
-    rows, columns = dots.shape[0] // DOWN, dots.shape[1] // ACROSS
-    bits = (dots.reshape(rows, DOWN, columns, ACROSS) * _BITS[None, :, None, :]).sum(axis=(1, 3))
-    return np.where(bits > 0, BRAILLE + bits, ord(" ")).astype(np.uint32)
+    lit = dots.view(np.uint8)
+    bits = np.zeros((dots.shape[0] // DOWN, dots.shape[1] // ACROSS), dtype=np.uint8)
+    for down in range(DOWN):
+        for across in range(ACROSS):
+            bits |= lit[down::DOWN, across::ACROSS] << _BITS[down][across]
+    return np.where(bits > 0, np.uint32(BRAILLE) + bits, np.uint32(ord(" "))).astype(np.uint32)
 
 
 def text_of(codes: Codes) -> str:
@@ -124,10 +126,12 @@ def text_of(codes: Codes) -> str:
 
 
 def _clipped(edges: Array, width: float, height: float) -> tuple[Array, NDArray[np.int64]]:
-    """What of edges lies in the window (Liang and Barsky), and which edges these are."""
-    corners = edges.reshape(-1, 2)
-    if not len(edges) or (corners.min() >= 0.0 and (corners.max(axis=0) <= (width, height)).all()):
-        return edges, np.arange(len(edges))
+    """What of edges lies in the window (Liang and Barsky), as columns (4, n), and which edges these are."""
+    columns = np.ascontiguousarray(edges.T)
+    if not len(edges) or (
+        columns.min() >= 0.0 and columns[::2].max() <= width and columns[1::2].max() <= height
+    ):
+        return columns, np.arange(len(edges))
     start, span = edges[:, :2], edges[:, 2:] - edges[:, :2]
     enter, leave = np.zeros(len(edges)), np.ones(len(edges))
     for axis, size in ((0, width), (1, height)):
@@ -139,4 +143,4 @@ def _clipped(edges: Array, width: float, height: float) -> tuple[Array, NDArray[
             leave = np.where(still & (room < 0.0), -1.0, leave)
     kept = np.flatnonzero(enter <= leave)
     ends = [start[kept] + t[kept, None] * span[kept] for t in (enter, leave)]
-    return np.hstack(ends), kept
+    return np.ascontiguousarray(np.hstack(ends).T), kept

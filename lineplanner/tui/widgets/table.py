@@ -10,12 +10,12 @@ from rich.segment import Segment
 from rich.style import Style
 from textual import events
 from textual.binding import Binding, BindingType
-from textual.geometry import Region, Size
+from textual.geometry import Size
 from textual.message import Message
 from textual.strip import Strip
-from textual.widget import Widget
 
 from lineplanner.report.rows import Row, Table
+from lineplanner.tui.widgets.kept_lines import KeptLines
 from lineplanner.tui.widgets.text import fitted, tidy
 
 FRONT = 2  # cells before the first column: cursor and mark of a change
@@ -36,7 +36,7 @@ _TONES = {
 }
 
 
-class TableView(Widget, can_focus=True):
+class TableView(KeptLines, can_focus=True):
     """A table. Up and down move the cursor, left and right choose a cell or shift what is too wide."""
 
     ALLOW_SELECT = False
@@ -102,13 +102,13 @@ class TableView(Widget, can_focus=True):
         self.table, self.moved = table, moved
         self.row = max(0, min(self.row if row is None else row, len(table.rows) - 1))
         self._fit()
-        self.refresh()
+        self.redraw()
 
     def unmark(self) -> None:
         """Take the marks of a change away."""
         if self.moved:
             self.moved = frozenset()
-            self.refresh()
+            self.redraw_later()
 
     @property
     def current(self) -> Row | None:
@@ -199,13 +199,10 @@ class TableView(Widget, can_focus=True):
         if self.reading:
             self._scroll(row)
             return
-        before, top = self.row, self.top
+        before = self.row
         self.row = max(0, min(row, len(self.table.rows) - 1))
         self._keep_in_sight()
-        if top != self.top:
-            self.refresh()
-        else:
-            self.refresh(*(Region(0, n - top + self.headed, self.size.width, 1) for n in (before, self.row)))
+        self.redraw()
         if before != self.row:
             self.post_message(self.Moved(self))
 
@@ -214,7 +211,7 @@ class TableView(Widget, can_focus=True):
         top = max(0, min(row, len(self.table.rows) - self.room))
         if top != self.top:
             self.row = self.top = top
-            self.refresh()
+            self.redraw()
 
     def action_across(self, step: int) -> None:
         if self.by_cell:
@@ -223,7 +220,7 @@ class TableView(Widget, can_focus=True):
         else:
             whole = self.front + sum(self._widths) + self.gap * len(self._widths)
             self.shift = max(0, min(self.shift + step * 8, whole - self.size.width))
-        self.refresh()
+        self.redraw()
 
     def action_choose(self) -> None:
         self.post_message(self.Chosen(self))
@@ -247,15 +244,15 @@ class TableView(Widget, can_focus=True):
 
     # --- drawing -----------------------------------------------------------------------------------------
 
-    def render_line(self, y: int) -> Strip:
+    def draw_line(self, y: int) -> Strip:
         if self._fitted != self.size:  # drawn before the event that tells of the new size
             self._fit()
-        width, base = self.size.width, self.rich_style
+        width, base = self.size.width, self.look()
         if self.headed and y == 0:
             text = " " * self.front + (" " * self.gap).join(
                 self._cell(n, c) for n, c in enumerate(self.table.columns)
             )
-            return self._strip([Segment(text, self.get_component_rich_style("table--head"))], y)
+            return self._strip([Segment(text, self.look("table--head"))], y)
         place = self.top + y - self.headed
         if place >= len(self.table.rows):
             return Strip([Segment(" " * width, base)], width)
@@ -264,9 +261,9 @@ class TableView(Widget, can_focus=True):
     def _strip(self, segments: list[Segment], y: int) -> Strip:
         """Cut to the window, with the bar at the right that says which part of the rows is in sight."""
         width = self.size.width
-        style = segments[-1].style or self.rich_style
+        style = segments[-1].style or self.look()
         strip = Strip(segments).crop(self.shift, self.shift + width - 1).adjust_cell_length(width - 1, style)
-        return Strip([*strip, Segment(self._thumb(y - self.headed), self.rich_style)], width)
+        return Strip([*strip, Segment(self._thumb(y - self.headed), self.look())], width)
 
     def _thumb(self, line: int) -> str:
         count, room = len(self.table.rows), self.room
@@ -285,7 +282,7 @@ class TableView(Widget, can_focus=True):
         for n, text in enumerate(row.cells):
             toned = style if n != self.tone_column else self._style(row.mark, cursor=here)
             if row.paths and row.path_at(n) in self.moved:
-                toned += Style(underline=True) if here else self.get_component_rich_style("table--changed")
+                toned += Style(underline=True) if here else self.look("table--changed")
             chosen = here and self.by_cell and n == self.column and self.has_focus
             segments.append(Segment(self._cell(n, text), toned))
             after = here and self.by_cell and n + 1 == self.column and self.has_focus
@@ -308,8 +305,8 @@ class TableView(Widget, can_focus=True):
 
     def _style(self, mark: str, *, cursor: bool) -> Style:
         tone = _TONES.get(mark)
-        style = self.get_component_rich_style(f"table--{tone}") if tone else self.rich_style
-        return style + self.get_component_rich_style("table--cursor", partial=True) if cursor else style
+        style = self.look(f"table--{tone}") if tone else self.look()
+        return style + self.look("table--cursor", partial=True) if cursor else style
 
 
 def reading_table(lines: Iterable[str]) -> Table:

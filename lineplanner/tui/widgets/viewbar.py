@@ -9,10 +9,11 @@ from textual import events
 from textual.binding import Binding, BindingType
 from textual.message import Message
 from textual.strip import Strip
-from textual.widget import Widget
+
+from lineplanner.tui.widgets.kept_lines import KeptLines
 
 
-class ViewBar(Widget, can_focus=True):
+class ViewBar(KeptLines, can_focus=True):
     """Names of the views; left and right change them while the bar has the focus."""
 
     ALLOW_SELECT = False
@@ -36,7 +37,7 @@ class ViewBar(Widget, can_focus=True):
     def show(self, name: str) -> None:
         """Bracket a view."""
         self.chosen = name
-        self.refresh()
+        self.redraw()
 
     def action_across(self, step: int) -> None:
         place = (self.names.index(self.chosen) + step) % len(self.names)
@@ -54,13 +55,13 @@ class ViewBar(Widget, can_focus=True):
         number = self.names.index(name) + 1
         return f"[{number} {name}]" if name == self.chosen else f" {number} {name} "
 
-    def render_line(self, y: int) -> Strip:
-        base = self.rich_style
+    def draw_line(self, y: int) -> Strip:
+        base = self.look()
         segments = [Segment(">" if self.has_focus else " ", base)]
         for name in self.names if y == 0 else ():
             style = base
             if name == self.chosen:
-                style = self.get_component_rich_style("bar--focus" if self.has_focus else "bar--chosen")
+                style = self.look("bar--focus" if self.has_focus else "bar--chosen")
             segments += [Segment(self._shown(name), style), Segment(" ", base)]
         end = 1 + sum(len(self._shown(name)) + 1 for name in self.names[: self.names.index(self.chosen) + 1])
         shift = max(0, end - self.size.width)  # what is bracketed stays in sight

@@ -13,15 +13,15 @@ from textual.message import Message
 from textual.widgets import Static
 
 from lineplanner.report.plot import plot_of, reading_at
+from lineplanner.report.program_text import area_notes
 from lineplanner.report.rows import Table
 from lineplanner.report.view_tables import (
-    areas_notes,
     areas_table,
     card_rows,
     caution_rows,
     check_said,
     checks_table,
-    program_notes,
+    program_said,
     program_table,
 )
 from lineplanner.tui.session import Session
@@ -143,7 +143,7 @@ class AreasView(TableLoadView):
 
     def show(self, session: Session, moved: frozenset[str]) -> None:
         super().show(session, moved)
-        notes = areas_notes(session.plan, session.style)
+        notes = area_notes()
         self.query_one("#said", Static).update(self.lines(line.strip() for line in notes))
 
     def table(self, session: Session) -> Table:
@@ -189,7 +189,7 @@ class ProgramView(LoadView):
         table.styles.height = len(table.table.rows) + 1
         show_plot(self.query_one(ProgramPlot), session)
         notes = self.query_one("#notes", TableView)
-        notes.show(reading_table(program_notes(session.plan, session.style)))
+        notes.show(reading_table(program_said(session.plan, session.style)))
         notes.styles.height = "1fr" if self.screen.size.width >= XWIDE else len(notes.table.rows)
 
 
