@@ -51,10 +51,7 @@ class PlannerScreen(Screen[None]):
     def __init__(self, session: Session) -> None:
         super().__init__(classes="-ascii" if session.style.ascii else None)
         self.session = session
-
-    @property
-    def hints(self) -> Hints:
-        return self.query_one(Hints)
+        self.hints = Hints(self.FIRST_HINTS, ascii_only=session.style.ascii)
 
     def retell(self) -> None:
         """Word everything anew, in the session's style."""

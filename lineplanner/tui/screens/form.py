@@ -23,7 +23,6 @@ from lineplanner.tui.session import Session
 from lineplanner.tui.sheet import Sheet
 from lineplanner.tui.widgets.form_lines import FormLines
 from lineplanner.tui.widgets.head import HeadLines
-from lineplanner.tui.widgets.hints import Hints
 from lineplanner.tui.widgets.quantity_field import QuantityField
 from lineplanner.tui.widgets.text import tidy
 
@@ -61,20 +60,26 @@ class RecordForm(PlannerScreen):
         super().__init__(session)
         self.ref = ref
         self.sheet = Sheet(session, ref)
+        ascii_only = session.style.ascii
+        self.title_line = Static(id="title", markup=False)
+        self.head = HeadLines(ascii_only=ascii_only)
+        self.finder = Finder(compact=True)
+        self.field = QuantityField(session.style)
+        self.above = FormLines("above", ascii_only=ascii_only)
+        self.below = FormLines("below", ascii_only=ascii_only)
         self._top = 0
 
     def compose(self) -> ComposeResult:
-        ascii_only = self.session.style.ascii
-        yield Static(id="title", markup=False)
-        yield HeadLines(ascii_only=ascii_only)
+        yield self.title_line
+        yield self.head
         with Horizontal(id="search"):
             yield Static("find: ", markup=False)
-            yield Finder(compact=True)
+            yield self.finder
         with Vertical(id="fields"):
-            yield FormLines("above", ascii_only=ascii_only)
-            yield QuantityField(self.session.style)
-            yield FormLines("below", ascii_only=ascii_only)
-        yield Hints(ascii_only=ascii_only)
+            yield self.above
+            yield self.field
+            yield self.below
+        yield self.hints
 
     def on_mount(self) -> None:
         for one in self.query(Input):
@@ -88,10 +93,6 @@ class RecordForm(PlannerScreen):
 
     def on_screen_resume(self) -> None:
         self.retell()
-
-    @property
-    def field(self) -> QuantityField:
-        return self.query_one(QuantityField)
 
     # --- showing -----------------------------------------------------------------------------------------
 
@@ -113,10 +114,9 @@ class RecordForm(PlannerScreen):
     def show(self, *notes: str) -> None:
         """Everything anew, in the same breath as the change; notes stand first under the field."""
         self._head()
-        finder = self.query_one(Finder)
-        if finder.value != self.sheet.search:
-            with finder.prevent(Input.Changed):
-                finder.value = self.sheet.search
+        if self.finder.value != self.sheet.search:
+            with self.finder.prevent(Input.Changed):
+                self.finder.value = self.sheet.search
         own = (self.sheet.note,) if self.sheet.note else ()
         self.field.show(self.sheet.line, self.session.style, *notes, *own)
         self._place()
@@ -130,13 +130,12 @@ class RecordForm(PlannerScreen):
         )
         unsaved = "   * not saved" if self.ref in self.session.dirty else ""
         title = tidy(f"{kind} {stem}{status}{unsaved}   {record.name}", ascii_only=self.session.style.ascii)
-        self.query_one("#title", Static).update(Content(f" {title}"))
-        head = self.query_one(HeadLines)
-        head.show(
+        self.title_line.update(Content(f" {title}"), layout=False)
+        self.head.show(
             head_of(self.session.plan, self.session.style, max(self.size.width - 2, 20)), self.session.moved
         )
         if self.size.height < _LOW:
-            head.styles.height = 1
+            self.head.styles.height = 1
 
     def _place(self) -> None:
         """Lines above and below the field, so that it is in view with a little room below."""
@@ -146,12 +145,12 @@ class RecordForm(PlannerScreen):
         self._top = max(min(self._top, at), at - max(room - own - _SLACK, 0), 0)
         above = sheet.lines[self._top : at]
         below = sheet.lines[at + 1 : at + 1 + room]
-        self.query_one("#above", FormLines).show(above, self._top, len(above))
-        self.query_one("#below", FormLines).show(below, at + 1, len(below))
+        self.above.show(above, self._top, len(above))
+        self.below.show(below, at + 1, len(below))
 
     def key_comes(self) -> None:
         super().key_comes()
-        self.query_one(HeadLines).unmark()
+        self.head.unmark()
 
     # --- moving and giving -------------------------------------------------------------------------------
 
@@ -175,7 +174,7 @@ class RecordForm(PlannerScreen):
         here = self._here
         notes = self._give()
         if here == self._here and not self._moved(step) and step < 0:
-            self.query_one(Finder).focus()
+            self.finder.focus()
         self.show(*notes)
 
     @property
@@ -209,7 +208,7 @@ class RecordForm(PlannerScreen):
 
     def action_find(self) -> None:
         self.show(*self._give())
-        self.query_one(Finder).focus()
+        self.finder.focus()
 
     def on_input_changed(self, event: Input.Changed) -> None:
         if isinstance(event.input, Finder):

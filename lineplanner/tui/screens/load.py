@@ -25,7 +25,6 @@ from lineplanner.tui.screens.records import RecordList
 from lineplanner.tui.screens.why import why_screen
 from lineplanner.tui.session import Session
 from lineplanner.tui.widgets.head import HeadLines
-from lineplanner.tui.widgets.hints import Hints
 from lineplanner.tui.widgets.text import tidy
 from lineplanner.tui.widgets.viewbar import ViewBar
 from lineplanner.tui.widgets.views import VIEWS, LoadView, view_named
@@ -66,16 +65,19 @@ class LoadScreen(PlannerScreen):
 
     def __init__(self, session: Session) -> None:
         super().__init__(session)
+        self.title_line = Static(id="title", markup=False)
+        self.head = HeadLines(id="head", ascii_only=session.style.ascii)
+        self.bar = ViewBar(VIEWS, id="bar")
+        self.views: dict[str, LoadView] = {}
         self.view = VIEWS[0]
         self.told: Plan | None = None
         self.hang = 0
 
     def compose(self) -> ComposeResult:
-        ascii_only = self.session.style.ascii
-        yield Static(id="title", markup=False)
-        yield HeadLines(id="head", ascii_only=ascii_only)
-        yield ViewBar(VIEWS, id="bar")
-        yield Hints(ascii_only=ascii_only)
+        yield self.title_line
+        yield self.head
+        yield self.bar
+        yield self.hints
 
     async def on_mount(self) -> None:
         self.retell()
@@ -86,15 +88,15 @@ class LoadScreen(PlannerScreen):
     @property
     def body(self) -> LoadView | None:
         """The view in sight, once it is there."""
-        return next((view for view in self.query(LoadView) if view.id == f"view-{self.view}"), None)
+        return self.views.get(self.view)
 
     def retell(self, moved: frozenset[str] = frozenset()) -> None:
         """The plan as it is now; figures that the last edit moved carry a mark."""
         plan, style = self.session.plan, self.session.style
         self.told = plan
         self._title()
-        self.query_one(HeadLines).show(head_of(plan, style, max(self.size.width - 2, 20)), moved)
-        for view in self.query(LoadView):
+        self.head.show(head_of(plan, style, max(self.size.width - 2, 20)), moved)
+        for view in self.views.values():
             view.stale = True
         if self.body is not None:
             self.body.tell(self.session, moved)
@@ -105,11 +107,11 @@ class LoadScreen(PlannerScreen):
         room = max(self.size.width - len(unsaved) - len(demo) - 2, 20)
         text = f" {title_text(self.session.plan, room)}{unsaved}{demo}"
         title = Content(tidy(text, ascii_only=self.session.style.ascii))
-        self.query_one("#title", Static).update(title, layout=False)
+        self.title_line.update(title, layout=False)
 
     def key_comes(self) -> None:
         super().key_comes()
-        self.query_one(HeadLines).unmark()
+        self.head.unmark()
         if self.body is not None:
             self.body.unmark()
 
@@ -125,19 +127,19 @@ class LoadScreen(PlannerScreen):
 
     async def action_view(self, name: str) -> None:
         """Another view; each is made when it is first asked for."""
-        first = not self.query(LoadView)  # then the setpoints stay in sight
-        for view in self.query(LoadView):
-            view.display = view.id == f"view-{name}"
+        first = not self.views  # then the setpoints stay in sight
+        for view in self.views.values():
+            view.display = view is self.views.get(name)
         self.view = name
-        self.query_one(ViewBar).show(name)
+        self.bar.show(name)
         chosen = self.body
         if chosen is None:
-            chosen = view_named(name, ascii_only=self.session.style.ascii)
+            chosen = self.views[name] = view_named(name, ascii_only=self.session.style.ascii)
             await self.mount(chosen, before=self.hints)
             chosen.select(self.hang)
         if chosen.stale:
             chosen.tell(self.session)
-        if not self.query_one(ViewBar).has_focus:
+        if not self.bar.has_focus:
             chosen.take_focus(scroll=not first)
         if not first and self.has_class("-low"):
             self.call_after_refresh(chosen.scroll_visible, animate=False, top=True)
@@ -157,9 +159,8 @@ class LoadScreen(PlannerScreen):
     # --- why ---------------------------------------------------------------------------------------------
 
     def action_why(self) -> None:
-        head = self.query_one(HeadLines)
-        path = None if head.has_focus or self.body is None else self.body.path
-        self.why(path or head.path or SET_FIGURE)
+        path = None if self.head.has_focus or self.body is None else self.body.path
+        self.why(path or self.head.path or SET_FIGURE)
 
     def why(self, path: str) -> None:
         self.app.push_screen(why_screen(self.session.plan, path, self.session.style))
@@ -192,7 +193,7 @@ class LoadScreen(PlannerScreen):
 
     def action_entry(self, step: int) -> None:
         self.hang = (self.hang + step) % len(self.session.case.load.hangs)
-        for view in self.query(LoadView):
+        for view in self.views.values():
             view.select(self.hang)
         where = f"entry {self.hang + 1} of {len(self.session.case.load.hangs)}"
         self.say(f"{where}: {self.session.case.load.hangs[self.hang].part}")

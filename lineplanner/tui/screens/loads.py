@@ -22,7 +22,6 @@ from lineplanner.report.rows import COLUMNS, RIGHT, Listed, Row, Table, waiting
 from lineplanner.report.words import error_text
 from lineplanner.tui.opening import SYSTEMS, KeptRows, Known, Opening
 from lineplanner.tui.screens.base import LEAST, PlannerScreen
-from lineplanner.tui.widgets.hints import Hints
 from lineplanner.tui.widgets.table import TableView
 from lineplanner.tui.widgets.text import tidy
 from lineplanner.units import System
@@ -94,7 +93,7 @@ class LoadsScreen(PlannerScreen):
             id="loads", stretch=VERDICT, giver=RECIPE, tone_column=VERDICT, gap=1, ascii_only=ascii_only
         )
         yield Static(id="below", markup=False)
-        yield Hints(self.FIRST_HINTS, ascii_only=ascii_only)
+        yield self.hints
 
     def on_mount(self) -> None:
         self.query_one("#find", Input).cursor_blink = False

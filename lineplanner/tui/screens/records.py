@@ -14,7 +14,6 @@ from lineplanner.tui.edited import Ref
 from lineplanner.tui.screens.base import PlannerScreen
 from lineplanner.tui.screens.form import RecordForm
 from lineplanner.tui.session import Session
-from lineplanner.tui.widgets.hints import Hints
 from lineplanner.tui.widgets.table import TableView
 from lineplanner.tui.widgets.text import tidy
 
@@ -43,7 +42,7 @@ class RecordList(PlannerScreen):
         ascii_only = self.session.style.ascii
         yield Static(id="title", markup=False)
         yield TableView(id="records", ascii_only=ascii_only)
-        yield Hints(ascii_only=ascii_only)
+        yield self.hints
 
     def on_mount(self) -> None:
         self.retell()

@@ -58,16 +58,15 @@ class QuantityField(Widget):
         self.lines = 1
         self._line: Line | None = None
         self._notes: tuple[str, ...] = ()
+        self.label = Static(classes="label", markup=False)
+        self.entry = Entry(select_on_focus=False, compact=True)
+        self.said = Static(classes="said", markup=False)
 
     def compose(self) -> ComposeResult:
         with Horizontal():
-            yield Static(classes="label", markup=False)
-            yield Entry(select_on_focus=False, compact=True)
-        yield Static(classes="said", markup=False)
-
-    @property
-    def entry(self) -> Entry:
-        return self.query_one(Entry)
+            yield self.label
+            yield self.entry
+        yield self.said
 
     def show(self, line: Line | None, style: Style, *notes: str) -> None:
         """Show a line; its text stands in the input, refused or not. Typing replaces a text that is in force."""
@@ -91,9 +90,8 @@ class QuantityField(Widget):
         text = tidy(
             "nothing found" if self._line is None else self._line.row.label, ascii_only=self.units.ascii
         )
-        label = self.query_one(".label", Static)
-        label.styles.width = width
-        label.update(Content(fitted(f"> {text}", width - 1)))
+        self.label.styles.width = width
+        self.label.update(Content(fitted(f"> {text}", width - 1)), layout=False)
 
     def on_input_changed(self, event: Input.Changed) -> None:
         event.stop()
@@ -108,5 +106,5 @@ class QuantityField(Widget):
             )
         width = max((self.size.width or self.screen.size.width) - 3, 10)
         text = [tidy(one, ascii_only=self.units.ascii) for words in found for one in wrapped(words, width)]
-        self.lines = 1 + len(text)
-        self.query_one(".said", Static).update(Content("\n".join(text)))
+        grown, self.lines = self.lines != 1 + len(text), 1 + len(text)
+        self.said.update(Content("\n".join(text)), layout=grown)

@@ -27,21 +27,31 @@ class RackView(LoadView):
         self.hang = 0
         self.owner: int | None = None
         self.scene: Scene | None = None
+        self.canvas = RackCanvas(self.pick, ascii_only=ascii_only, id="canvas")
+        self.part = TableView(id="part", headed=False, ascii_only=ascii_only)
+        self.ledger = TableView(id="ledger", by_cell=True, giver=0, ascii_only=ascii_only)
+        self.line = Static(id="line", markup=False)
+        self.plot = ProgramPlot(ascii_only=ascii_only, id="beside")
+        self.ranked = TableView(id="ranked", by_cell=True, giver=0, ascii_only=ascii_only)
 
     def compose(self) -> ComposeResult:
         with Horizontal(id="all"):
             with Container(id="left"):
-                yield RackCanvas(self.pick, ascii_only=self.ascii, id="canvas")
+                yield self.canvas
                 with Container(id="side"):
-                    yield TableView(id="part", headed=False, ascii_only=self.ascii)
-                    yield TableView(id="ledger", by_cell=True, giver=0, ascii_only=self.ascii)
-                yield Static(id="line", markup=False)
+                    yield self.part
+                    yield self.ledger
+                yield self.line
             with Vertical(id="third"):
-                yield ProgramPlot(ascii_only=self.ascii, id="beside")
-                yield TableView(id="ranked", by_cell=True, giver=0, ascii_only=self.ascii)
+                yield self.plot
+                yield self.ranked
 
     def take_focus(self, *, scroll: bool = True) -> None:
-        self.query_one(RackCanvas).focus(scroll_visible=scroll)
+        self.canvas.focus(scroll_visible=scroll)
+
+    def unmark(self) -> None:
+        for table in (self.part, self.ledger, self.ranked):
+            table.unmark()
 
     @property
     def path(self) -> str | None:
@@ -62,14 +72,14 @@ class RackView(LoadView):
         self.hang = min(self.hang, len(session.case.load.hangs) - 1)
         if self.hung is None or self.hung.hang != self.hang:
             self.owner = self._first()
-        self.query_one(RackCanvas).show(self.scene, self.owner)
+        self.canvas.show(self.scene, self.owner)
         self._say(moved)
 
     def select(self, hang: int) -> None:
         self.hang = hang
         if self.session is not None:
             self.owner = self._first()
-            self.query_one(RackCanvas).select(self.owner)
+            self.canvas.select(self.owner)
             self._say(frozenset(), only_part=True)
 
     def _first(self) -> int | None:
@@ -98,13 +108,13 @@ class RackView(LoadView):
         plan, style = self.session.plan, self.session.style
         room = max((self.size.width or self.screen.size.width) - 2, 10)
         lines = [fitted(line, room) for line in selected_lines(plan, style, self.hang, self.hung)]
-        self.query_one("#line", Static).update(self.lines(lines), layout=False)
+        self.line.update(self.lines(lines), layout=False)
         if self.screen.size.width < WIDE:
             return
         rows = selected_rows(plan, style, self.hang, self.hung)
-        self.query_one("#part", TableView).show(Table((), frozenset(), rows), moved)
+        self.part.show(Table((), frozenset(), rows), moved)
         if not only_part:
-            self.query_one("#ledger", TableView).show(areas_table(plan, style), moved)
+            self.ledger.show(areas_table(plan, style), moved)
             if self.screen.size.width >= XWIDE:
-                show_plot(self.query_one(ProgramPlot), self.session)
-                self.query_one("#ranked", TableView).show(checks_table(plan, style), moved)
+                show_plot(self.plot, self.session)
+                self.ranked.show(checks_table(plan, style), moved)
