@@ -10,7 +10,7 @@ from typing import TYPE_CHECKING
 from lineplanner import __version__
 
 if TYPE_CHECKING:
-    from lineplanner.cli.opened import Opened, Options
+    from lineplanner.cli.opened import Options
 
 INTERRUPTED = 130
 NEW_OBJECTS = 200_000  # more than a plan makes: a command ends before the collector would find anything
@@ -51,9 +51,11 @@ def _on_a_screen() -> bool:
     return os.environ.get("TERM") != "dumb" and all(one is not None and one.isatty() for one in streams)
 
 
-def _screens(opened: Opened, options: Options) -> int:
-    """The screens; only here are they loaded."""
+def _screens(options: Options) -> int:
+    """The screens; only here are they loaded. Raises FilesError where there is no site to work with."""
     from lineplanner.cli.fault import kept
+    from lineplanner.cli.opened import plain_letters
+    from lineplanner.files.site import find_site
     from lineplanner.tui.app import run
 
     gc.set_threshold(SESSION_OBJECTS)
@@ -61,7 +63,7 @@ def _screens(opened: Opened, options: Options) -> int:
     def fault(error: BaseException) -> str:
         return kept([], (type(error), error, error.__traceback__))
 
-    return run(opened.library, opened.style, fault, remember_units=options.units is None)
+    return run(find_site(options.site), options.units, fault, ascii_only=plain_letters(options))
 
 
 if __name__ == "__main__":

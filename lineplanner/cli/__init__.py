@@ -10,12 +10,12 @@ from collections.abc import Callable
 from typing import TYPE_CHECKING
 
 if TYPE_CHECKING:
-    from lineplanner.cli.opened import Opened, Options
+    from lineplanner.cli.opened import Options
 
 DONE, STOPPED, UNUSABLE, FAULT, INTERRUPTED = 0, 1, 2, 3, 130
 
 
-def main(arguments: list[str], screens: "Callable[[Opened, Options], int] | None" = None) -> int:
+def main(arguments: list[str], screens: "Callable[[Options], int] | None" = None) -> int:
     """Run one command; the return value is the exit code. A broken pipe is the caller's to end quietly.
 
     screens opens the screens where there is no command; without it the first load's card is printed.

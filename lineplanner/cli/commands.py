@@ -52,12 +52,11 @@ def lineplanner(ctx: click.Context, units: Any, site: str | None, *, ascii_only:
 
     Without a command it opens the screens; with no terminal it prints the run card of the site's first load.
     """
-    screens: Callable[[Opened, Options], int] | None = ctx.obj
+    screens: Callable[[Options], int] | None = ctx.obj
     ctx.obj = Options(units, site, ascii_only)
     if ctx.invoked_subcommand:
         return None
-    site_opened = opened(ctx.obj)
-    return screens(site_opened, ctx.obj) if screens else _first_card(site_opened)
+    return screens(ctx.obj) if screens else _first_card(opened(ctx.obj))
 
 
 def _options(units: Any, site: str | None, ascii_only: bool) -> Options:  # noqa: FBT001 - as click hands it over

@@ -10,11 +10,11 @@ from pathlib import Path as DiskPath
 from typing import Any
 
 from lineplanner.errors import Fact
+from lineplanner.files.content import LARGEST, digest_of
 from lineplanner.files.positions import Positions, positions
 from lineplanner.files.problems import FileProblem, FilesError
 from lineplanner.inputs.declared import Path
 
-LARGEST = 2_000_000  # bytes; a hundred times the largest file of the demo shop
 BYTE_ORDER_MARK = "\ufeff"
 
 
@@ -51,13 +51,6 @@ def open_document(path: DiskPath) -> Document:
     text = _decoded(path, content)
     stamp = Stamp(modified, len(content), digest_of(content))
     return Document(path, text, _parsed(path, text.removeprefix(BYTE_ORDER_MARK)), stamp)
-
-
-def digest_of(content: bytes) -> str:
-    """A fingerprint of a file's bytes."""
-    import hashlib
-
-    return hashlib.sha256(content).hexdigest()
 
 
 def failed(path: DiskPath, key: str, line: int | None = None, **facts: Fact) -> FilesError:

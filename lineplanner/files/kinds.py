@@ -6,6 +6,7 @@ from functools import cache
 from pathlib import PurePosixPath
 from typing import Any, get_type_hints
 
+from lineplanner.files.folders import FOLDERS, STANDARDS
 from lineplanner.inputs.bath import Bath
 from lineplanner.inputs.cautions import CautionTexts
 from lineplanner.inputs.declared import Shape, declared, shape_of
@@ -36,17 +37,17 @@ class FileKind:
     rows: bool = False
 
 
-_RECORDS: tuple[tuple[str, Any, str], ...] = (
-    ("site", Site, "configs"),
-    ("line", Line, "configs/lines"),
-    ("bath", Bath, "configs/baths"),
-    ("recipe", Recipe, "configs/recipes"),
-    ("material", Material, "configs/materials"),
-    ("cautions", CautionTexts, "configs/cautions"),
-    ("rack", Rack, "rack_library/racks"),
-    ("part", Part, "rack_library/parts"),
-    ("load", Load, "rack_library/loads"),
-)
+_RECORDS: Mapping[str, Any] = {
+    "site": Site,
+    "line": Line,
+    "bath": Bath,
+    "recipe": Recipe,
+    "material": Material,
+    "cautions": CautionTexts,
+    "rack": Rack,
+    "part": Part,
+    "load": Load,
+}
 # kind of file -> field of Tables
 _TABLES = {
     "alloys": "alloys",
@@ -60,13 +61,12 @@ _TABLES = {
     "uncertainty": "uncertainty",
     "conductivity": "conductivity",
 }
-STANDARDS = PurePosixPath("configs/standards")
 
 
 @cache
 def kinds() -> Mapping[str, FileKind]:
     """All kinds of file by name."""
-    found = {name: FileKind(name, record, PurePosixPath(folder)) for name, record, folder in _RECORDS}
+    found = {name: FileKind(name, record, FOLDERS[name]) for name, record in _RECORDS.items()}
     for name, field in _TABLES.items():
         record = _table_record(field)
         found[name] = FileKind(name, record, STANDARDS, field, rows=field in _names(record))

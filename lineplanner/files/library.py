@@ -8,7 +8,8 @@ from pathlib import Path as DiskPath
 from typing import Any
 
 from lineplanner.files.document import failed
-from lineplanner.files.kinds import STANDARDS, kinds
+from lineplanner.files.folders import STANDARDS, paths_of, stems_of, toml_files
+from lineplanner.files.kinds import kinds
 from lineplanner.files.problems import FileProblem, FilesError, listed, shown_path, token
 from lineplanner.files.reading import Entry, read_entry, row_problems
 from lineplanner.files.site import SiteFolder, find_site, writable
@@ -49,16 +50,11 @@ class Library:
 
     def paths(self, kind: str) -> list[DiskPath]:
         """All files of a kind's folder, subfolders included."""
-        if kind == "site":
-            return [self.folder_of(kind) / "site.toml"]
-        return _toml_files(self.folder_of(kind))
+        return paths_of(self.folder, kind)
 
     def stems(self, kind: str) -> dict[str, DiskPath]:
         """The names of a kind with their files; of two files with one name the first."""
-        found: dict[str, DiskPath] = {}
-        for path in self.paths(kind):
-            found.setdefault(path.stem, path)
-        return found
+        return stems_of(self.folder, kind)
 
     def listing_problems(self, kind: str) -> list[FileProblem]:
         """Names that cannot be referred to, and names that two files share."""
@@ -134,7 +130,7 @@ class Library:
         parts: dict[str, Any] = {}
         given: dict[str, DiskPath] = {}
         problems: list[FileProblem] = []
-        for path in _toml_files(self.folder / STANDARDS):
+        for path in toml_files(self.folder / STANDARDS):
             try:
                 entry = self.open(path)
             except FilesError as error:
@@ -194,14 +190,3 @@ def _entry_or_error(path: DiskPath, kind: str | None) -> Entry | FilesError:
 def _of_one_name(path: DiskPath, first: DiskPath) -> FileProblem:
     facts = {"stem": path.stem, "other": shown_path(first)}
     return FileProblem(path, None, (), "file.two_of_one_name", facts)
-
-
-def _toml_files(folder: DiskPath) -> list[DiskPath]:
-    """The .toml files below a folder in a stable order; hidden ones (editors' copies) are not looked at."""
-    try:
-        found = [path for path in folder.rglob("*.toml") if path.is_file()]
-    except OSError:
-        return []
-    return sorted(
-        path for path in found if not any(part.startswith(".") for part in path.relative_to(folder).parts)
-    )

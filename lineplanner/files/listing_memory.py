@@ -11,7 +11,7 @@ from pathlib import Path as DiskPath
 from typing import Any
 
 import lineplanner
-from lineplanner.files.document import LARGEST, digest_of
+from lineplanner.files.content import LARGEST, digest_of
 from lineplanner.files.memory import site_key, write_whole
 from lineplanner.files.site import FOLDERS, SiteFolder
 

@@ -6,7 +6,7 @@ import tomllib
 from collections.abc import Mapping
 from pathlib import Path as DiskPath
 
-from lineplanner.files.document import digest_of
+from lineplanner.files.content import digest_of
 from lineplanner.files.site import SiteFolder, user_folder
 
 _MOST = 10_000  # bytes; a file that is larger is not ours

@@ -7,7 +7,8 @@ import shutil
 import tempfile
 from pathlib import Path as DiskPath
 
-from lineplanner.files.document import Stamp, digest_of, failed
+from lineplanner.files.content import digest_of
+from lineplanner.files.document import Stamp, failed
 from lineplanner.files.problems import FileChangedError, FileProblem, FilesError
 from lineplanner.files.reading import read_entry
 

@@ -6,7 +6,6 @@ from dataclasses import dataclass
 from pathlib import Path as DiskPath
 
 import lineplanner
-from lineplanner.files.document import failed
 
 FOLDERS = ("configs", "rack_library")
 
@@ -72,6 +71,8 @@ def user_folder() -> DiskPath:
 
 
 def _checked(folder: DiskPath) -> DiskPath:
+    from lineplanner.files.document import failed
+
     try:
         if not folder.is_dir():
             raise failed(folder, "site.no_folder")

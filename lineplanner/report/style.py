@@ -1,13 +1,17 @@
 """Metric or US, plain or with signs: how every figure of a report is printed."""
 
+from __future__ import annotations
+
 from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import lru_cache
+from typing import TYPE_CHECKING
 
-from lineplanner import units
 from lineplanner.errors import Fact, KindOfQuantity, Quantity
-from lineplanner.quantities import KINDS, TIME, Time
-from lineplanner.units import System
+
+if TYPE_CHECKING:  # a style is at hand before the first frame, what it takes to show a figure is not
+    from lineplanner.quantities import Time
+    from lineplanner.units import System
 
 LONG = 7200.0  # s; from here a time in a sentence is said in hours
 # A difference of temperature reads like a temperature; units tells them apart only to read them back.
@@ -76,7 +80,7 @@ class Style:
         """A fact of a message: a quantity shown, words as they are."""
         if not isinstance(fact, Quantity):
             return str(fact)
-        if fact.kind.name == TIME.name:
+        if fact.kind.name == "time":
             return self.time_said(fact.value)
         return self.show(fact.value, fact.kind)
 
@@ -86,6 +90,8 @@ class Style:
         >>> Style().time_said(7140.0), Style().time_said(19_560.0)
         ('119 min', '5.43 h')
         """
+        from lineplanner.quantities import TIME
+
         return self.show(time, TIME, unit="h" if time >= LONG else None)
 
 
@@ -93,6 +99,9 @@ class Style:
 def _shown(
     style: Style, value: float, kind: str, unit: str | None, step: float | None, digits: int | None
 ) -> str:
+    from lineplanner import units
+    from lineplanner.quantities import KINDS
+
     text = units.show(value, KINDS[kind], style.system, unit=unit, step=step, digits=digits)
     return style.marked(text)
 
@@ -125,6 +134,6 @@ def plain(text: str) -> str:
     return text.encode("ascii", "replace").decode("ascii")
 
 
-def as_style(style: "Style | System") -> Style:
+def as_style(style: Style | System) -> Style:
     """A unit system alone stands for plain letters."""
     return Style(style, ascii=True) if isinstance(style, str) else style

@@ -18,9 +18,7 @@ from textual.binding import Binding, BindingType
 from textual.widgets import Input
 
 from lineplanner.errors import PlannerError
-from lineplanner.files.library import Library
-from lineplanner.files.memory import memory_folder, remembered
-from lineplanner.report.style import Style
+from lineplanner.files.memory import memory_folder
 from lineplanner.tui import theme
 from lineplanner.tui.opening import Opening
 from lineplanner.tui.screens.ask import AskScreen
@@ -29,7 +27,9 @@ from lineplanner.tui.screens.loads import LoadsScreen
 from lineplanner.tui.screens.why import why_screen
 
 if TYPE_CHECKING:
+    from lineplanner.files.site import SiteFolder
     from lineplanner.tui.session import Session
+    from lineplanner.units import System
 
 Kept = Callable[[BaseException], str]
 """Keeps a fault in a log and says so in a sentence."""
@@ -231,15 +231,11 @@ def colours_wanted() -> bool:
     return Console(file=sys.__stderr__, force_terminal=True).color_system in ("256", "truecolor", "windows")
 
 
-def run(library: Library, style: Style, kept: Kept, *, remember_units: bool = True) -> int:
+def run(place: SiteFolder, units: System | None, kept: Kept, *, ascii_only: bool = False) -> int:
     """Open the screens; the exit code. Raises FilesError where the site cannot be used at all."""
-    memory = memory_folder()
-    known = remembered(memory, library.place).get("units") if remember_units else None
-    if known in ("us", "metric"):
-        style = Style("us" if known == "us" else "metric", style.ascii)
+    opening = Opening(place, units=units, ascii_only=ascii_only, memory=memory_folder())
     if os.environ.get("SSH_CONNECTION"):
         os.environ.setdefault("TEXTUAL_ANIMATIONS", "none")
-    opening = Opening(library, style=style, memory=memory)
     app = PlannerApp(opening, kept, plain_colours=not colours_wanted())
     gc.freeze()  # what is loaded by now stays: nothing of it is looked through before the first frame
     try:

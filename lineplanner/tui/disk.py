@@ -5,7 +5,8 @@ from collections.abc import Container, Iterable, Iterator, Mapping
 from dataclasses import replace
 from pathlib import Path as DiskPath
 
-from lineplanner.files.document import Stamp, digest_of
+from lineplanner.files.content import digest_of
+from lineplanner.files.document import Stamp
 from lineplanner.files.library import Library
 from lineplanner.files.problems import FileChangedError, FileProblem, FilesError
 from lineplanner.files.reading import Entry

@@ -8,6 +8,7 @@ from lineplanner.errors import PlannerError
 from lineplanner.files.library import Library
 from lineplanner.files.memory import remember, remembered, site_key
 from lineplanner.files.problems import FilesError
+from lineplanner.files.site import SiteFolder
 from lineplanner.inputs.approval import approved
 from lineplanner.report.style import Style
 from lineplanner.tui.edited import Ref, redrafted
@@ -42,7 +43,12 @@ class Session(Workbench):
     @property
     def packaged(self) -> bool:
         """Whether this is the demo shop out of the package; the first save makes the user's own of it."""
-        return self._disk.library.place.packaged
+        return self.place.packaged
+
+    @property
+    def place(self) -> SiteFolder:
+        """The site's folder."""
+        return self._disk.library.place
 
     def names(self, kind: str) -> list[str]:
         """The names of the site's files of a kind: what a reference may say."""
@@ -161,12 +167,13 @@ class Session(Workbench):
             self._journal.clear()
 
     def _remembered(self, key: str) -> str | None:
-        return remembered(self._memory, self._disk.library.place).get(key) if self._memory else None
+        return remembered(self._memory, self.place).get(key) if self._memory else None
 
     def _remember(self, **values: str) -> None:
         if self._memory is None:
             return
-        place = self._disk.library.place
-        known = {key: one for key, one in remembered(self._memory, place).items() if key in ("load", "units")}
+        known = {
+            key: one for key, one in remembered(self._memory, self.place).items() if key in ("load", "units")
+        }
         if known | values != known:
-            remember(self._memory, place, known | values)
+            remember(self._memory, self.place, known | values)

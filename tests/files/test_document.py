@@ -6,7 +6,7 @@ from pathlib import Path
 
 import pytest
 
-from lineplanner.files.document import LARGEST
+from lineplanner.files.content import LARGEST
 from lineplanner.files.problems import word
 from lineplanner.files.reading import check, read
 from tests.files.samples import BATH, RACK

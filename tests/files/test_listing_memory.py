@@ -133,7 +133,7 @@ def test_a_broken_file_of_rows_is_none(site: SiteFolder, tmp_path: Path) -> None
 
 @pytest.mark.parametrize("body", [b"[]", b"3", b"{}", b'{"stamp": "a", "rows": [1]}', b"[" * 100_000])
 def test_a_whole_file_of_something_else_is_none(site: SiteFolder, tmp_path: Path, body: bytes) -> None:
-    from lineplanner.files.document import digest_of
+    from lineplanner.files.content import digest_of
 
     remember_rows(tmp_path / "m", site, "a", ROWS)
     (path,) = (tmp_path / "m").iterdir()

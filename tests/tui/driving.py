@@ -7,7 +7,7 @@ from pathlib import Path
 
 from textual.pilot import Pilot
 
-from lineplanner.files.library import Library
+from lineplanner.files.site import SiteFolder
 from lineplanner.files.starter import start
 from lineplanner.report.style import Style
 from lineplanner.tui.app import PlannerApp
@@ -36,7 +36,9 @@ def drive(
     told: Callable[[str], None] = lambda _: None,
 ) -> PlannerApp:
     """Run steps once every load of the list is worked out."""
-    opening = Opening(Library(folder), style=style or Style("metric"), memory=memory)
+    style = style or Style("metric")
+    place = SiteFolder(folder)
+    opening = Opening(place, units=style.system, ascii_only=style.ascii, memory=memory)
 
     def kept(error: BaseException) -> str:
         told(repr(error))

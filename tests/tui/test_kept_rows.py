@@ -2,7 +2,7 @@
 
 import subprocess
 import sys
-from dataclasses import replace
+from dataclasses import asdict, replace
 from pathlib import Path
 from types import MappingProxyType
 
@@ -15,21 +15,20 @@ from lineplanner.files.site import SiteFolder
 from lineplanner.report.listing import list_load
 from lineplanner.report.rows import Listed
 from lineplanner.report.style import Style
-from lineplanner.tui.opening import SYSTEMS, KeptRows, Known
+from lineplanner.tui.opening import SYSTEMS, KeptRows, Known, SiteFacts
 from lineplanner.tui.screens.loads import LoadsScreen
 from tests.tui.driving import drive, site
 
 FIRST_FRAME = """
 import asyncio, json, sys
 from pathlib import Path
-from lineplanner.files.library import Library
-from lineplanner.report.style import Style
+from lineplanner.files.site import SiteFolder
 from lineplanner.tui.app import PlannerApp
 from lineplanner.tui.opening import Opening
 from lineplanner.tui.screens.loads import LoadsScreen
 
 folder, memory = map(Path, sys.argv[1:])
-app = PlannerApp(Opening(Library(folder), style=Style("metric"), memory=memory), repr)
+app = PlannerApp(Opening(SiteFolder(folder), memory=memory), repr)
 seen = []
 
 def frame():
@@ -37,7 +36,8 @@ def frame():
     if not seen and isinstance(screen, LoadsScreen) and screen.shown:
         strips = screen._compositor.render_strips()
         seen.append("\\n".join("".join(one.text for one in strip) for strip in strips))
-        seen.append(sorted({"numpy", "shapely", "pint", "lineplanner.plan"} & set(sys.modules)))
+        heavy = {"numpy", "shapely", "pint", "pydantic_core", "lineplanner.plan", "lineplanner.files.library"}
+        seen.append(sorted(heavy & set(sys.modules)))
 
 app.post_display_hook = frame
 
@@ -130,6 +130,9 @@ def test_rows_go_on_into_the_session_and_follow_what_is_saved(shop: tuple[Path, 
     assert row.cells[3] != "159 A"
 
 
+FACTS = SiteFacts("a shop", "us", "a")
+
+
 def rows_of(level: str = "ok") -> Known:
     row = Listed("a", ("a", "b", "c", "1 A", "2 min", "CHECKS MET"), level, "a b", "CHECKS MET", "DANGER")
     return {"a": MappingProxyType(dict.fromkeys(SYSTEMS, row))}
@@ -142,10 +145,10 @@ def place(tmp_path: Path) -> SiteFolder:
 
 def test_rows_are_kept_for_the_same_letters_only(place: SiteFolder, tmp_path: Path) -> None:
     signs, plain = (KeptRows(tmp_path / "m", ascii_only=one) for one in (False, True))
-    signs.keep(place, signs.stamp(place), rows_of())
-    assert signs.rows(place, signs.stamp(place)) == rows_of()
-    assert plain.rows(place, plain.stamp(place)) == {}
-    assert signs.rows(place, None) == {}
+    signs.keep(place, signs.stamp(place), rows_of(), FACTS)
+    assert signs.take(place, signs.stamp(place)) == (rows_of(), FACTS)
+    assert plain.take(place, plain.stamp(place)) == ({}, None)
+    assert signs.take(place, None) == ({}, None)
     assert KeptRows(None, ascii_only=False).stamp(place) is None
 
 
@@ -156,16 +159,16 @@ def test_rows_worked_out_while_files_or_program_changed_are_not_kept(
     stamp = kept.stamp(place)
     with (place.path / "configs" / "site.toml").open("a", encoding="utf-8") as file:
         file.write("\n")
-    kept.keep(place, stamp, rows_of())
+    kept.keep(place, stamp, rows_of(), FACTS)
     monkeypatch.setattr(lineplanner, "__version__", "next")  # replaced while it runs
-    kept.keep(place, kept.stamp(place), rows_of())
+    kept.keep(place, kept.stamp(place), rows_of(), FACTS)
     assert not (tmp_path / "m").exists()
 
 
 def test_a_load_that_cannot_be_read_is_read_again_at_every_start(place: SiteFolder, tmp_path: Path) -> None:
     kept = KeptRows(tmp_path / "m", ascii_only=False)
-    kept.keep(place, kept.stamp(place), rows_of("unread"))
-    assert kept.rows(place, kept.stamp(place)) == {}
+    kept.keep(place, kept.stamp(place), rows_of("unread"), FACTS)
+    assert kept.take(place, kept.stamp(place)) == ({}, FACTS)
 
 
 def test_rows_of_another_shape_are_none(place: SiteFolder, tmp_path: Path) -> None:
@@ -182,5 +185,12 @@ def test_rows_of_another_shape_are_none(place: SiteFolder, tmp_path: Path) -> No
         {"more": ""},
     ):
         texts = {name: getattr(replace(row), name) for name in Listed.__slots__} | odd
-        remember_rows(tmp_path / "m", place, stamp, {"a": {"metric": texts, "us": texts}})
-        assert kept.rows(place, stamp) == {}
+        loads = {"a": {"metric": texts, "us": texts}}
+        remember_rows(tmp_path / "m", place, stamp, {"site": asdict(FACTS), "loads": loads})
+        assert kept.take(place, stamp) == ({}, None)
+    for facts in ({}, {"name": 1}, {"units": "furlongs"}, {"first_load": 2}):
+        site_texts = {**asdict(FACTS), **facts} if facts else {}
+        remember_rows(tmp_path / "m", place, stamp, {"site": site_texts, "loads": {}})
+        assert kept.take(place, stamp) == ({}, None)
+    remember_rows(tmp_path / "m", place, stamp, {"site": asdict(FACTS), "loads": []})
+    assert kept.take(place, stamp) == ({}, None)

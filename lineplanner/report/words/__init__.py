@@ -9,14 +9,19 @@ names.py      checks, stages, processes and statuses as they are called
 Each module of sentences holds MESSAGES: key -> template with facts in braces.
 """
 
+from __future__ import annotations
+
 import importlib
 import pkgutil
 from collections.abc import Mapping
 from functools import cache
+from typing import TYPE_CHECKING
 
 from lineplanner.errors import Facts, PlannerError, ProblemsError
 from lineplanner.report.style import Style, as_style
-from lineplanner.units import System
+
+if TYPE_CHECKING:
+    from lineplanner.units import System
 
 
 @cache

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import contextlib
 from collections.abc import Mapping
 from functools import partial
 from typing import TYPE_CHECKING, ClassVar, cast
@@ -16,18 +17,17 @@ from textual.widgets import Input, Static
 from textual.worker import Worker, WorkerState, get_current_worker
 
 from lineplanner.errors import InputError, PlannerError
-from lineplanner.files.library import Library
 from lineplanner.report.listing_lines import said_below
 from lineplanner.report.rows import COLUMNS, RIGHT, Listed, Row, Table, waiting
 from lineplanner.report.words import error_text
-from lineplanner.tui.opening import SYSTEMS, KeptRows, Known, Opening
+from lineplanner.tui.opening import SYSTEMS, KeptRows, Known, Opening, facts_of
 from lineplanner.tui.screens.base import LEAST, PlannerScreen
 from lineplanner.tui.widgets.table import TableView
 from lineplanner.tui.widgets.text import tidy
-from lineplanner.units import System
 
 if TYPE_CHECKING:
     from lineplanner.tui.session import Session
+    from lineplanner.units import System
 
 RECIPE, VERDICT = 1, 5
 PAUSE = 0.1  # s between two drawings of rows that fill in
@@ -74,8 +74,9 @@ class LoadsScreen(PlannerScreen):
         self.opening_wanted = self.prepared = self.waits = False
         self.stems: list[str] = []
         self.shown: list[str] = []
-        memory = session.memory if isinstance(session, Opening) else None
-        self.kept = KeptRows(memory, ascii_only=session.style.ascii)
+        ascii_only = session.style.ascii
+        self.opening = session if isinstance(session, Opening) else None
+        self.kept = self.opening.kept if self.opening else KeptRows(None, ascii_only=ascii_only)
         self.known: Known = {}
         self.faulty: set[str] = set()
         self.generation = 0
@@ -97,20 +98,20 @@ class LoadsScreen(PlannerScreen):
 
     def on_mount(self) -> None:
         self.query_one("#find", Input).cursor_blink = False
-        self.read(self.session.last_load, kept=True)
+        self.read(self.session.last_load)
 
     # --- which loads -------------------------------------------------------------------------------------
 
-    def read(self, select: str | None = None, *, kept: bool = False) -> None:
+    def read(self, select: str | None = None) -> None:
         """The loads as they are on disk now; what was planned before is planned again.
 
-        kept takes up the rows of an earlier run if nothing that they depend on has changed since.
+        The first time the rows of an earlier run are taken up, if nothing that they depend on has changed since.
         """
         self.generation += 1
         self.stems = self.session.loads()
-        site = self.session.library.place
-        stamp = self.kept.stamp(site)
-        rows = self.kept.rows(site, stamp) if kept else {}
+        opening, self.opening = self.opening, None
+        stamp = opening.stamp if opening else self.kept.stamp(self.session.place)
+        rows = opening.known if opening else {}
         self.known, self.faulty = {stem: rows[stem] for stem in self.stems if stem in rows}, set()
         self.find(select or self.selected)
         start = partial(self.plan_all, self.generation, stamp)
@@ -199,9 +200,10 @@ class LoadsScreen(PlannerScreen):
     @work(thread=True, exclusive=True, group="listing", exit_on_error=False)
     def plan_all(self, generation: int, stamp: str | None) -> None:
         """Plan every load that no row is known of, the one under the cursor first; keep the rows for the next start."""
+        from lineplanner.files.library import Library
         from lineplanner.report.listing import list_load
 
-        worker, library = get_current_worker(), Library(self.session.library.place)
+        worker, library = get_current_worker(), Library(self.session.place)
         while not worker.is_cancelled and (stem := self._next()) is not None:
             self.at_work = stem
             found = list_load(library, stem, SYSTEMS, self.session.style)
@@ -210,7 +212,10 @@ class LoadsScreen(PlannerScreen):
             self._load_the_rest()
         self._load_the_rest()
         if not worker.is_cancelled and generation == self.generation:
-            self.kept.keep(library.place, stamp, dict(self.known))
+            with contextlib.suppress(
+                PlannerError
+            ):  # of a site's file that was broken meanwhile nothing is kept
+                self.kept.keep(library.place, stamp, dict(self.known), facts_of(library))
 
     def _load_the_rest(self) -> None:
         """What opening a load needs, loaded while the first one is being read."""
