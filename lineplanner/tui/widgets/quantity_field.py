@@ -101,6 +101,8 @@ class QuantityField(Widget):
         """Write below the input what is understood of it, and what is to be known of the row."""
         line, found = self._line, list(self._notes)
         if line is not None:
+            if len(line.row.label) > label_width(self.size.width or self.screen.size.width) - 3:
+                found.append(line.row.label)  # cut in its row
             found += field_lines(
                 line.row, line.text, self.entry.value, line.refused, self.units, new=line.draft is not None
             )
