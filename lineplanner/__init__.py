@@ -15,7 +15,7 @@ rooms below it, never those above.
     capacity    program against line                 spread      current distribution over the rack
     program     current, stages, minutes
     circuit     resistance and drop, rectifier to part
-    load        the areas of the load, item by item
+    load        the areas of the load, item by item  racking     what each move of the hand does to a load
     geometry    outlines, solids, the three areas    bath        what the solution does
     inputs      records of what a file or form describes
     findings    ok, note, caution, stop

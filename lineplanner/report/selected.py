@@ -10,11 +10,12 @@ from lineplanner.report.setpoints import rectifier_of
 from lineplanner.report.style import Style
 from lineplanner.report.words.names import number_of
 
+
 def selected_lines(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[str, str]:
     """The selected part on two lines: which it is and how it hangs; what it has in the solution and takes."""
     which, how, item, wet, carrying, *rest = (row.cells[0] for row in selected_rows(plan, style, hang, hung))
     taken = [f"{carrying}, {rest[0].partition(': ')[2]}", rest[1]] if rest else [carrying]
-    return "   ".join((which, how, item)), "   ".join((wet, *taken))
+    return f"{which}   {how}   {item}", "   ".join((wet, *taken))
 
 
 def selected_rows(plan: Plan, style: Style, hang: int, hung: Hung | None) -> tuple[Row, ...]:

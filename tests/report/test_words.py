@@ -15,13 +15,13 @@ from lineplanner.plan import Plan
 from lineplanner.quantities import KINDS
 from lineplanner.report.setpoints import caution_text, fix_of, text_of
 from lineplanner.report.style import Style
-from lineplanner.report.words import checks, error_text, errors, messages, reasons, sentence
+from lineplanner.report.words import checks, error_text, errors, messages, racking, reasons, sentence
 from lineplanner.report.words.names import check_name, counted_statuses
 from tests.report import keys
 
 HERE = Path(__file__).parent
 PACKAGE = HERE.parents[1] / "lineplanner"
-ROOMS = ("plan.py", "program", "capacity", "circuit", "load", "bath", "cautions", "geometry")
+ROOMS = ("plan.py", "program", "capacity", "circuit", "load", "racking", "bath", "cautions", "geometry")
 EXPECTED: dict[str, Any] = tomllib.loads((HERE / "sentences.toml").read_text(encoding="utf-8"))
 
 
@@ -56,7 +56,7 @@ def test_every_reason_of_an_area_has_a_sentence() -> None:
 def test_no_sentence_is_left_over() -> None:
     used, _ = keys.all_keys(PACKAGE, ROOMS)
     shell = {key for key in errors.MESSAGES if key in _asked_for_by_commands()}
-    unused = {key for module in (checks, errors) for key in module.MESSAGES} - used.keys() - shell
+    unused = {key for module in (checks, errors, racking) for key in module.MESSAGES} - used.keys() - shell
     assert unused == set()
 
 

@@ -11,14 +11,14 @@ from textual.binding import Binding, BindingType
 from textual.content import Content
 from textual.widgets import Static
 
-from lineplanner.errors import PlannerError
+from lineplanner.errors import InputError, PlannerError
 from lineplanner.files.problems import FileChangedError
 from lineplanner.inputs.load import Load
 from lineplanner.plan import Plan
+from lineplanner.racking import exchanged, one_less, one_more
 from lineplanner.report.views import head_of, title_text
 from lineplanner.report.words import error_text
 from lineplanner.tui.edited import Ref
-from lineplanner.tui.hang_edits import CannotError, one_less, one_more, swapped
 from lineplanner.tui.screens.ask import AskScreen, PickScreen, PromptScreen
 from lineplanner.tui.screens.base import PlannerScreen
 from lineplanner.tui.screens.records import RecordList
@@ -175,8 +175,8 @@ class LoadScreen(PlannerScreen):
         """One edit of the load; why it is refused, in words."""
         try:
             record = change(self.session.case.load)
-        except CannotError as error:
-            self.say(str(error))
+        except InputError as error:
+            self.say(error_text(error, self.session.style))
             return
         problems = self.session.set_record(self.load_ref, record, label)
         if problems:
@@ -209,7 +209,7 @@ class LoadScreen(PlannerScreen):
         if part is not None:
             place = self.hang
             self.edit(
-                lambda load: swapped(load, place, part),
+                lambda load: exchanged(load, place, part),
                 f"{part} in place of {self.session.case.load.hangs[place].part}",
             )
 

@@ -2,10 +2,11 @@
 
 import pytest
 
+from lineplanner.errors import InputError
 from lineplanner.inputs.hanging import parts_hung, tip_names
 from lineplanner.inputs.load import Hang, Load
 from lineplanner.inputs.rack import Rack, TipRow
-from lineplanner.tui.hang_edits import CannotError, one_less, one_more, runs_of, swapped
+from lineplanner.racking import exchanged, one_less, one_more, runs_of
 
 RACK = Rack(
     name="two rows of four",
@@ -53,22 +54,22 @@ def test_a_counted_entry_changes_its_count() -> None:
 
 def test_what_is_not_possible_is_refused_in_words() -> None:
     full = load(Hang(part="lug", tips=("A1-A4", "B1-B4")))
-    with pytest.raises(CannotError, match="no free tip is left on rack two-rows"):
+    with pytest.raises(InputError, match=r"racking\.no_tip"):
         one_more(full, RACK, 0)
-    with pytest.raises(CannotError, match="free places have no next one"):
+    with pytest.raises(InputError, match=r"racking\.next_place"):
         one_more(load(Hang(part="lug", at=((0.1, 0.2),))), RACK, 0)
     for last in (
         Hang(part="lug", count=1),
         Hang(part="lug", tips=("A1",)),
         Hang(part="lug", at=((0.1, 0.2),)),
     ):
-        with pytest.raises(CannotError, match="one part is left here"):
+        with pytest.raises(InputError, match=r"racking\.last_of_entry"):
             one_less(load(last), 0)
 
 
 def test_another_part_keeps_the_places_and_brings_its_own_material() -> None:
     first = load(Hang(part="lug", tips=("A1-A3",), material="6061-t6", turn=0.5))
-    after = swapped(first, 0, "pin").hangs[0]
+    after = exchanged(first, 0, "pin").hangs[0]
     assert (after.part, after.tips, after.turn, after.material) == ("pin", ("A1-A3",), 0.5, None)
 
 

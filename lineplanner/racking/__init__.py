@@ -1,0 +1,41 @@
+"""Racking: what each move of the hand does to a load. Every move takes a load and gives another one.
+
+places.py   the parts of a load place by place, and a load made of places again
+tips.py     which tips are free, and which is the next one
+moves.py    to the next tip, once more, off, turned, to the other side, another part
+fields.py   a field of tips filled in a pattern
+spots.py    free positions: moved by steps of the grid, aligned, spaced evenly
+counts.py   one part more or less of an entry, another part in it
+"""
+
+from lineplanner.racking.counts import exchanged, one_less, one_more
+from lineplanner.racking.fields import PATTERNS, Pattern, filled
+from lineplanner.racking.moves import added, again, faced, moved, reracked, sided, swapped, taken_off, turned
+from lineplanner.racking.places import Key, Racked, places_of
+from lineplanner.racking.spots import aligned, spaced
+from lineplanner.racking.tips import Direction, runs_of
+
+__all__ = [
+    "PATTERNS",
+    "Direction",
+    "Key",
+    "Pattern",
+    "Racked",
+    "added",
+    "again",
+    "aligned",
+    "exchanged",
+    "faced",
+    "filled",
+    "moved",
+    "one_less",
+    "one_more",
+    "places_of",
+    "reracked",
+    "runs_of",
+    "sided",
+    "spaced",
+    "swapped",
+    "taken_off",
+    "turned",
+]
