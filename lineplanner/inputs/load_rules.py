@@ -120,6 +120,12 @@ def line_fit_problems(load: Load, line: Line) -> list[Problem]:
     return found
 
 
+def tanks_for(recipe: Recipe, line: Line, baths: Mapping[str, Bath]) -> list[str]:
+    """The tanks of a line whose bath a recipe runs in. baths by the name of the file."""
+    wanted = BATH_OF[recipe.process]
+    return [tank.name for tank in line.tanks if tank.bath in baths and baths[tank.bath].kind == wanted]
+
+
 def bath_fit_problems(load: Load, recipe: Recipe, name: str, bath: Bath) -> list[Problem]:
     """A recipe whose process does not run in the bath of the load's tank."""
     if BATH_OF[recipe.process] == bath.kind:

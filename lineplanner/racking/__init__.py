@@ -11,7 +11,7 @@ counts.py   one part more or less of an entry, another part in it
 from lineplanner.racking.counts import exchanged, one_less, one_more
 from lineplanner.racking.fields import PATTERNS, Pattern, filled
 from lineplanner.racking.moves import added, again, faced, moved, reracked, sided, swapped, taken_off, turned
-from lineplanner.racking.places import Key, Racked, places_of
+from lineplanner.racking.places import Key, Racked, changed_places, places_of
 from lineplanner.racking.spots import aligned, spaced
 from lineplanner.racking.tips import Direction, runs_of
 
@@ -24,6 +24,7 @@ __all__ = [
     "added",
     "again",
     "aligned",
+    "changed_places",
     "exchanged",
     "faced",
     "filled",

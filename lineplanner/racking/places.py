@@ -48,6 +48,14 @@ def places_of(load: Load) -> dict[Key, Place]:
     return found
 
 
+def changed_places(before: Load, after: Load) -> tuple[Key, ...]:
+    """The places of a load that another one does not have alike: what a step of undo put back."""
+    there = {(place.how, place.tips, place.at) for place in places_of(before).values()}
+    return tuple(
+        key for key, place in places_of(after).items() if (place.how, place.tips, place.at) not in there
+    )
+
+
 def how_of(hang: Hang) -> Hang:
     """An entry without its places: how its parts hang."""
     return replace(hang, tips=(), at=(), count=None)

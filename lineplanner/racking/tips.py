@@ -64,7 +64,7 @@ def next_group(
         across, down = there[0] - here[0], there[1] - here[1]
         ahead = across * way[0] + down * way[1]
         beside = abs(across * way[1]) + abs(down * way[0])
-        if ahead <= max(beside / 2, _EVEN):
+        if ahead <= max(beside, _EVEN):  # within an eighth of a turn to either side
             continue
         far = (beside > HIT, round(ahead + _ASIDE * beside, 6))
         if best is None or far < best[0]:

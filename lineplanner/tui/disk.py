@@ -10,7 +10,7 @@ from lineplanner.files.document import Stamp
 from lineplanner.files.library import Library
 from lineplanner.files.problems import FileChangedError, FileProblem, FilesError
 from lineplanner.files.reading import Entry
-from lineplanner.files.saving import save
+from lineplanner.files.saving import save, save_checked
 from lineplanner.tui.edited import EditedLibrary, Reading, Ref
 
 _STEM = re.compile(r"[a-z0-9]+(?:-[a-z0-9]+)*")
@@ -60,17 +60,29 @@ class Disk:
 
     def save_new(self, stem: str, entry: Entry) -> DiskPath:
         """Write a load to a file of its own. Raises FilesError for a name that is none or is taken."""
-        path = self.library.folder_of("load") / f"{stem}.toml"
-        if not _STEM.fullmatch(stem):
-            raise FilesError([FileProblem(None, None, (), "file.stem", {"stem": stem[:60]})])
-        if _DEVICES.fullmatch(stem) or stem in self.library.stems("load"):
-            raise FileChangedError([FileProblem(path, None, (), "file.exists")])
+        self._check_new("load", stem)
         text = self._text(("load", entry.document.path.stem), entry)
         self._make_writable()
-        path = self.library.folder_of("load") / path.name
+        path = self.library.folder_of("load") / f"{stem}.toml"
         stamp = save(path, text, None)
         self.reading.entries["load", stem] = _written(entry, path, text, stamp)
         return path
+
+    def create(self, kind: str, stem: str, text: str) -> DiskPath:
+        """A new file of a kind. Raises FilesError for a name that is none or is taken, or a text that does not read."""
+        self._check_new(kind, stem)
+        self._make_writable()
+        path = self.library.folder_of(kind) / f"{stem}.toml"
+        save_checked(path, text, None, kind)
+        return path
+
+    def _check_new(self, kind: str, stem: str) -> None:
+        """Raise FilesError for a name that is none or is taken."""
+        if not _STEM.fullmatch(stem):
+            raise FilesError([FileProblem(None, None, (), "file.stem", {"stem": stem[:60]})])
+        if _DEVICES.fullmatch(stem) or stem in self.library.stems(kind):
+            path = self.library.folder_of(kind) / f"{stem}.toml"
+            raise FileChangedError([FileProblem(path, None, (), "file.exists")])
 
     def _first(self, ref: Ref) -> Entry:
         return EditedLibrary(self.reading, {}).entry(*ref)

@@ -1,5 +1,8 @@
 """A session: one person's work on the loads of a site, kept on disk when saved and in a journal until then."""
 
+from collections import Counter
+from collections.abc import Iterator
+from contextlib import suppress
 from dataclasses import replace
 from datetime import date
 from pathlib import Path as DiskPath
@@ -9,7 +12,11 @@ from lineplanner.files.library import Library
 from lineplanner.files.memory import remember, remembered, site_key
 from lineplanner.files.problems import FilesError
 from lineplanner.files.site import SiteFolder
+from lineplanner.files.writing import dump
 from lineplanner.inputs.approval import approved
+from lineplanner.inputs.load import Load
+from lineplanner.inputs.load_rules import tanks_for
+from lineplanner.racking import added
 from lineplanner.report.style import Style
 from lineplanner.tui.edited import Ref, redrafted
 from lineplanner.tui.journal import Journal
@@ -89,6 +96,39 @@ class Session(Workbench):
         ref = ("recipe", recipe)
         record = approved(self.record(ref), by=by, on=on)
         return self.set_record(ref, record, f"approved by {by} (recipe {recipe})")
+
+    # --- new loads ---------------------------------------------------------------------------------------
+
+    def tanks_for(self, recipe: str) -> list[tuple[str, str, str]]:
+        """Line, tank and bath that a recipe may run in, those that it runs in already first. Raises FilesError."""
+        record = self.library.record("recipe", recipe)
+        found: list[tuple[str, str, str]] = []
+        for line in self.names("line"):
+            known = self.library.record("line", line)
+            baths = {tank.bath: self.library.record("bath", tank.bath) for tank in known.tanks}
+            bath_of = {tank.name: tank.bath for tank in known.tanks}
+            found += [(line, tank, bath_of[tank]) for tank in tanks_for(record, known, baths)]
+        used = Counter((one.line, one.tank) for one in self._readable_loads() if one.recipe == recipe)
+        return sorted(found, key=lambda one: -used[one[:2]])
+
+    def _readable_loads(self) -> Iterator[Load]:
+        for stem in self.names("load"):
+            with suppress(FilesError):
+                yield self.library.record("load", stem)
+
+    def new_load(self, stem: str, recipe: str, tank: tuple[str, str], rack: str, part: str) -> None:
+        """A load of one part on the first place of a rack, written and opened.
+
+        Raises PlannerError, and leaves no file, where it cannot be planned.
+        """
+        empty = Load(name=stem, recipe=recipe, rack=rack, line=tank[0], tank=tank[1], hangs=())
+        load = added(empty, self.library.record("rack", rack), part).load
+        path = self._disk.create("load", stem, dump(load, "load", self.style.system))
+        try:
+            self.open(stem)
+        except PlannerError:
+            path.unlink()
+            raise
 
     # --- saving ------------------------------------------------------------------------------------------
 

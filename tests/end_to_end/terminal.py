@@ -25,6 +25,7 @@ KEYS = {
     "right": "\x1b[C",
     "left": "\x1b[D",
 }
+KEYS |= {"f4": "\x1bOS", "delete": "\x1b[3~"}
 KEYS |= {"tab": "\t", "ctrl+p": "\x10", "ctrl+q": "\x11", "ctrl+w": "\x17", "ctrl+t": "\x14"}
 PATIENCE = 30.0  # s; a loaded machine is slow, a wrong screen stays wrong
 

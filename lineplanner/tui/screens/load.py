@@ -15,16 +15,17 @@ from lineplanner.errors import InputError, PlannerError
 from lineplanner.files.problems import FileChangedError
 from lineplanner.inputs.load import Load
 from lineplanner.plan import Plan
-from lineplanner.racking import exchanged, one_less, one_more
+from lineplanner.racking import changed_places, exchanged, one_less, one_more
 from lineplanner.report.views import head_of, title_text
 from lineplanner.report.words import error_text
 from lineplanner.tui.edited import Ref
 from lineplanner.tui.screens.ask import AskScreen, PickScreen, PromptScreen
-from lineplanner.tui.screens.base import PlannerScreen
+from lineplanner.tui.screens.hanging import KEYS, NOTE, RACK, HangingScreen
 from lineplanner.tui.screens.records import RecordList
 from lineplanner.tui.screens.why import why_screen
 from lineplanner.tui.session import Session
 from lineplanner.tui.widgets.head import HeadLines
+from lineplanner.tui.widgets.rack_view import RackView
 from lineplanner.tui.widgets.text import tidy
 from lineplanner.tui.widgets.viewbar import ViewBar
 from lineplanner.tui.widgets.views import VIEWS, LoadView, view_named
@@ -34,12 +35,13 @@ SET_FIGURE = "current.panel_set_A"
 CHANGED = ("S saves this load under another name. R gives up what is not saved and reads the files again.",)
 
 
-class LoadScreen(PlannerScreen):
+class LoadScreen(HangingScreen):
     """The plan of one load on one screen."""
 
     CSS_PATH = ["load.tcss", *(f"../widgets/{name}.tcss" for name in WIDGETS)]  # noqa: RUF012 - as textual does
     AUTO_FOCUS = ""
     BINDINGS: ClassVar[list[BindingType]] = [
+        *KEYS,
         Binding("question_mark", "why", "why"),
         Binding("u", "app.units", "units"),
         Binding("plus,equals_sign", "count(1)", "one more"),
@@ -63,8 +65,9 @@ class LoadScreen(PlannerScreen):
         Binding("escape,f10", "leave", "back", show=False),
     ]
 
-    def __init__(self, session: Session) -> None:
+    def __init__(self, session: Session, *, hanging: bool = False) -> None:
         super().__init__(session)
+        self.begin_hanging = hanging
         self.title_line = Static(id="title", markup=False)
         self.head = HeadLines(id="head", ascii_only=session.style.ascii)
         self.bar = ViewBar(VIEWS, id="bar")
@@ -82,6 +85,8 @@ class LoadScreen(PlannerScreen):
     async def on_mount(self) -> None:
         self.retell()
         await self.action_view(self.view)
+        if self.begin_hanging:
+            self.hang_on(on=True)
 
     # --- showing -----------------------------------------------------------------------------------------
 
@@ -131,7 +136,9 @@ class LoadScreen(PlannerScreen):
         for view in self.views.values():
             view.display = view is self.views.get(name)
         self.view = name
-        self.bar.show(name)
+        if self.hanging and name != RACK:
+            self.hang_on(on=False)
+        self.show_bar()
         chosen = self.body
         if chosen is None:
             chosen = self.views[name] = view_named(name, ascii_only=self.session.style.ascii)
@@ -171,18 +178,26 @@ class LoadScreen(PlannerScreen):
     def load_ref(self) -> Ref:
         return ("load", self.session.name)
 
-    def edit(self, change: Callable[[Load], Load], label: str) -> None:
-        """One edit of the load; why it is refused, in words."""
+    @property
+    def rack_view(self) -> RackView | None:
+        return self.body if isinstance(self.body, RackView) else None
+
+    def show_bar(self) -> None:
+        self.bar.show(self.view, NOTE if self.hanging else "")
+
+    def edit(self, change: Callable[[Load], Load], label: str) -> bool:
+        """One edit of the load; False where it is refused, and why in words."""
         try:
             record = change(self.session.case.load)
         except InputError as error:
             self.say(error_text(error, self.session.style))
-            return
+            return False
         problems = self.session.set_record(self.load_ref, record, label)
         if problems:
             self.say("; ".join(problems), grave=True)
-            return
+            return False
         self.retell(self.session.moved)
+        return True
 
     def action_count(self, step: int) -> None:
         place, rack = self.hang, self.session.case.rack
@@ -217,10 +232,19 @@ class LoadScreen(PlannerScreen):
         self.app.push_screen(RecordList(self.session))
 
     def action_undo(self) -> None:
-        self._step(self.session.undo(), "undone")
+        self._back(self.session.undo, "undone")
 
     def action_redo(self) -> None:
-        self._step(self.session.redo(), "done again")
+        self._back(self.session.redo, "done again")
+
+    def _back(self, step: Callable[[], str | None], word: str) -> None:
+        """A step through what was done; in hand is then what it put back."""
+        before = self.session.case.load
+        label = step()
+        changed = changed_places(before, self.session.case.load)
+        if changed and self.rack_view is not None:
+            self.rack_view.hand.hold(changed[:1])
+        self._step(label, word)
 
     def _step(self, label: str | None, word: str) -> None:
         self.hang = min(self.hang, len(self.session.case.load.hangs) - 1)

@@ -60,8 +60,9 @@ class LoadsScreen(PlannerScreen):
         Binding("pageup", "move(-10)", "ten loads up", show=False),
         Binding("pagedown", "move(10)", "ten loads down", show=False),
         Binding("escape", "clear", "show all loads", show=False),
-        Binding("f9", "again", "read again"),
+        Binding("f4", "new", "new load"),
         Binding("f10", "app.quit", "quit"),
+        Binding("f9", "again", "read again"),
         Binding("question_mark", "help", "help", show=False),
     ]
 
@@ -309,11 +310,20 @@ class LoadsScreen(PlannerScreen):
             return
         self.enter()
 
-    def enter(self) -> None:
-        """The screen of the load that the session has open."""
+    def enter(self, *, hanging: bool = False) -> None:
+        """The screen of the load that the session has open; hanging: with its part in hand."""
         from lineplanner.tui.screens.load import LoadScreen
 
-        self.app.push_screen(LoadScreen(self.session), self._back)
+        self.app.push_screen(LoadScreen(self.session, hanging=hanging), self._back)
+
+    def action_new(self) -> None:
+        """A new load, asked for in a few questions."""
+        if not self.ready:
+            self.say("the site is being read ...")
+            return
+        from lineplanner.tui.screens.new_load import NewLoad
+
+        NewLoad(self, partial(self.enter, hanging=True)).begin()
 
     def _back(self, _: object) -> None:
         """Back from a load: read again what was changed; what is typed next replaces what was found by."""

@@ -15,6 +15,7 @@ _KEYS = {
     "question_mark": "?",
     "plus": "+",
     "minus": "-",
+    "full_stop": ".",
     "left_square_bracket": "[",
     "right_square_bracket": "]",
 }

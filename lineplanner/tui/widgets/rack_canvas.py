@@ -1,6 +1,6 @@
 """The rack picture: parts to scale, one of them selected."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Iterable
 from typing import ClassVar
 
 import numpy as np
@@ -53,6 +53,12 @@ class RackCanvas(Widget, can_focus=True):
         Binding("right", "toward('right')", "part to the right", show=False, id="rack.right"),
         Binding("up", "toward('up')", "part above", show=False, id="rack.up"),
         Binding("down", "toward('down')", "part below", show=False, id="rack.down"),
+        *(
+            Binding(
+                f"shift+{way}", f"toward('{way}', 10)", f"ten steps {way}", show=False, id=f"rack.far-{way}"
+            )
+            for way in ("left", "right", "up", "down")
+        ),
         Binding("n", "next", "next part", id="rack.next"),
         Binding("N", "previous", "previous part", show=False, id="rack.previous"),
     ]
@@ -71,6 +77,10 @@ class RackCanvas(Widget, can_focus=True):
         self.ascii_only = ascii_only
         self.scene: Scene | None = None
         self.selected: int | None = None
+        self.marked: frozenset[int] = frozenset()
+        self.carry: Callable[[Direction, int], object] | None = (
+            None  # arrows go there while parts are carried
+        )
         self._view: View | None = None  # None: fitted
         self._cells: Cells | None = None
         self._codes: Codes = np.empty((0, 0), dtype=np.uint32)
@@ -81,12 +91,12 @@ class RackCanvas(Widget, can_focus=True):
 
     # --- what is shown -----------------------------------------------------------------------------------
 
-    def show(self, scene: Scene | None, selected: int | None = None) -> None:
-        """Another scene, with this part of it selected; the view stays if the scene has the same extent."""
+    def show(self, scene: Scene | None, selected: int | None = None, marked: Iterable[int] = ()) -> None:
+        """Another scene, with these parts of it selected and marked; the view stays if the extent is the same."""
         if scene is None or self.scene is None or scene.extent != self.scene.extent:
             self._view = None
         self.scene = scene
-        self.selected = self._known(selected)
+        self.selected, self.marked = self._known(selected), frozenset(marked)
         before = None if self._cells is None else (self._codes, self._inks)
         self._forget()
         if before is None or self._built() is None:
@@ -94,12 +104,13 @@ class RackCanvas(Widget, can_focus=True):
         else:
             self._refresh_changed(*before)
 
-    def select(self, owner: int | None) -> None:
-        """Select a part without telling on_pick; repaints the cells of the old and the new one only."""
+    def select(self, owner: int | None, marked: Iterable[int] | None = None) -> None:
+        """Select a part, and mark others, without telling on_pick; repaints the cells of those concerned only."""
         owner = self._known(owner)
-        if owner == self.selected:
+        marks = self.marked if marked is None else frozenset(marked)
+        if owner == self.selected and marks == self.marked:
             return
-        self.selected = owner
+        self.selected, self.marked = owner, marks
         if self._cells is None:
             self.refresh()
             return
@@ -160,8 +171,11 @@ class RackCanvas(Widget, can_focus=True):
 
     # --- events ------------------------------------------------------------------------------------------
 
-    def action_toward(self, direction: Direction) -> None:
-        self.toward(direction)
+    def action_toward(self, direction: Direction, steps: int = 1) -> None:
+        if self.carry is not None:
+            self.carry(direction, steps)
+        else:
+            self.toward(direction)
 
     def action_next(self) -> None:
         self.next()
@@ -244,7 +258,7 @@ class RackCanvas(Widget, can_focus=True):
 
     def _mark(self) -> None:
         assert self._cells is not None
-        self._codes, inks, self._marked = self._cells.with_selected(self.selected)
+        self._codes, inks, self._marked = self._cells.with_selected(self.selected, self.marked)
         self._inks = _joined_blanks(self._codes, inks.astype(np.int32))
 
     def _strip(self, y: int) -> Strip:

@@ -1,6 +1,6 @@
 """A rack picture as characters and inks in cells; knows no Textual and no style."""
 
-from collections.abc import Iterator
+from collections.abc import Collection, Iterator
 from enum import IntEnum
 from unicodedata import combining, east_asian_width
 
@@ -86,25 +86,35 @@ class Cells:
         left, top, right, bottom = self._boxes[owner].tolist()
         return left, top, right, bottom
 
-    def with_selected(self, owner: int | None) -> tuple[Codes, Inks, tuple[int, int, int, int] | None]:
-        """Codes and inks with one part marked, and the cells that differ: left, top, right, bottom (exclusive)."""
-        if owner is None or not 0 <= owner < len(self.scene.parts):
+    def with_selected(
+        self, owner: int | None, marked: Collection[int] = ()
+    ) -> tuple[Codes, Inks, tuple[int, int, int, int] | None]:
+        """Codes and inks with one part selected and some marked: the first in brackets, the others in parentheses.
+
+        Also the cells that differ: left, top, right, bottom (exclusive).
+        """
+        count = len(self.scene.parts)
+        owners = [one for one in marked if 0 <= one < count and one != owner]
+        owners += [owner] if owner is not None and 0 <= owner < count else []
+        if not owners:
             return self.codes, self.inks, None
         codes, inks = self.codes.copy(), self.inks.copy()
-        own = self.view.edges(self.scene.edges[self.scene.slice_of(owner)], *self._grid)
-        whose = np.full(len(own), owner, dtype=np.int32)
-        _, mine = raster.outline(own, whose, self.view.columns, self.view.rows, *self._grid)
+        own = np.concatenate([self.scene.edges[self.scene.slice_of(one)] for one in owners])
+        whose = np.zeros(len(own), dtype=np.int32)
+        edges = self.view.edges(own, *self._grid)
+        _, mine = raster.outline(edges, whose, self.view.columns, self.view.rows, *self._grid)
         inks[(mine != NOBODY) & ~self._taken] = Ink.SELECTED
-        for column, row, text in self._selected_marks(owner):
-            _write(codes, inks, column, row, text, Ink.SELECTED_NUMBER)
+        for one in owners:
+            for column, row, text in self._selected_marks(one, "[]" if one == owner else "()"):
+                _write(codes, inks, column, row, text, Ink.SELECTED_NUMBER)
         changed = np.argwhere((codes != self.codes) | (inks != self.inks))
         if not len(changed):
             return codes, inks, None
         (top, left), (bottom, right) = changed.min(axis=0).tolist(), changed.max(axis=0).tolist()
         return codes, inks, (left, top, right + 1, bottom + 1)
 
-    def _selected_marks(self, owner: int) -> Iterator[tuple[int, int, str]]:
-        """The number, and brackets around it or around the part; inside the window."""
+    def _selected_marks(self, owner: int, signs: str) -> Iterator[tuple[int, int, str]]:
+        """The number, and two signs around it or around the part; inside the window."""
         left, top, right, bottom = self.box_of(owner)
         columns, rows = self.view.columns, self.view.rows
         if right < 0 or bottom < 0 or left >= columns or top >= rows:
@@ -118,8 +128,8 @@ class Cells:
         first, last = (left, right) if width >= LEAST_WIDE else (left - 1, right + 1)
         if label and width > len(label) + _NEAR:  # beside the number rather than far off
             first, last = start - 1, start + len(label)
-        yield max(first, 0), row, "["
-        yield min(last, columns - 1), row, "]"
+        yield max(first, 0), row, signs[0]
+        yield min(last, columns - 1), row, signs[1]
 
     @property
     def _grid(self) -> tuple[int, int]:

@@ -11,6 +11,7 @@ from lineplanner.report.rows import Table
 from lineplanner.report.selected import item_of, selected_lines, selected_rows
 from lineplanner.report.view_tables import areas_table, checks_table
 from lineplanner.tui.session import Session
+from lineplanner.tui.widgets.hand import Hand, key_of, owners_of
 from lineplanner.tui.widgets.plot import ProgramPlot
 from lineplanner.tui.widgets.rack_canvas import RackCanvas
 from lineplanner.tui.widgets.table import TableView
@@ -27,6 +28,7 @@ class RackView(LoadView):
         self.hang = 0
         self.owner: int | None = None
         self.scene: Scene | None = None
+        self.hand = Hand()
         self.canvas = RackCanvas(self.pick, ascii_only=ascii_only, id="canvas")
         self.part = TableView(id="part", headed=False, ascii_only=ascii_only)
         self.ledger = TableView(id="ledger", by_cell=True, giver=0, ascii_only=ascii_only)
@@ -69,16 +71,36 @@ class RackView(LoadView):
     def show(self, session: Session, moved: frozenset[str]) -> None:
         self.session = session
         self.scene = scene_of(session.plan)
-        self.hang = min(self.hang, len(session.case.load.hangs) - 1)
-        if self.hung is None or self.hung.hang != self.hang:
-            self.owner = self._first()
-        self.canvas.show(self.scene, self.owner)
+        held = owners_of(self.scene, self.hand.keys)
+        if self.hand.key is not None and held:
+            front = self.hung is None or self.hung.side == "front"
+            own = owners_of(self.scene, [self.hand.key]) or held
+            self.owner = own[0] if front else own[-1]
+            self.hang = self.scene.parts[self.owner].hang
+            self.post_message(self.Picked(self.hang))
+        else:
+            self.hang = min(self.hang, len(session.case.load.hangs) - 1)
+            if self.hung is None or self.hung.hang != self.hang:
+                self.owner = self._first()
+        self._take()
+        self.canvas.show(self.scene, self.owner, owners_of(self.scene, self.hand.marked))
         self._say(moved)
+
+    def _take(self) -> None:
+        """The part selected on the picture is the one in hand; marks of places that are no more go."""
+        self.hand.key = key_of(self.scene, self.owner)
+        known = set() if self.scene is None else {(one.hang, one.position) for one in self.scene.parts}
+        self.hand.marked = [key for key in self.hand.marked if key in known]
+
+    def remark(self) -> None:
+        """Show other marks."""
+        self.canvas.select(self.owner, owners_of(self.scene, self.hand.marked))
 
     def select(self, hang: int) -> None:
         self.hang = hang
         if self.session is not None:
             self.owner = self._first()
+            self._take()
             self.canvas.select(self.owner)
             self._say(frozenset(), only_part=True)
 
@@ -97,6 +119,7 @@ class RackView(LoadView):
     def pick(self, owner: int | None) -> None:
         """Another part was picked on the picture."""
         self.owner = owner
+        self._take()
         if self.hung is not None and self.hung.hang != self.hang:
             self.hang = self.hung.hang
             self.post_message(self.Picked(self.hang))

@@ -32,11 +32,11 @@ class ViewBar(KeptLines, can_focus=True):
 
     def __init__(self, names: tuple[str, ...], *, id: str | None = None) -> None:  # noqa: A002
         super().__init__(id=id)
-        self.names, self.chosen = names, names[0]
+        self.names, self.chosen, self.note = names, names[0], ""
 
-    def show(self, name: str) -> None:
-        """Bracket a view."""
-        self.chosen = name
+    def show(self, name: str, note: str = "") -> None:
+        """Bracket a view; with a note only this one is named, and the note after it."""
+        self.chosen, self.note = name, note
         self.redraw()
 
     def action_across(self, step: int) -> None:
@@ -58,6 +58,9 @@ class ViewBar(KeptLines, can_focus=True):
     def draw_line(self, y: int) -> Strip:
         base = self.look()
         segments = [Segment(">" if self.has_focus else " ", base)]
+        if self.note:
+            text = f" {self._shown(self.chosen)}  {self.note}"
+            return Strip([Segment(text, self.look("bar--focus"))]).adjust_cell_length(self.size.width, base)
         for name in self.names if y == 0 else ():
             style = base
             if name == self.chosen:
