@@ -45,6 +45,7 @@ from lineplanner.program.story import run_figures
 from lineplanner.program.story_thickness import thickness_figures
 from lineplanner.program.window import check_window
 from lineplanner.quantities import Thickness
+from lineplanner.racking import Gaps, check_gaps, gap_figures, gaps_of
 from lineplanner.sources import Source, Status
 from lineplanner.trace import Figure
 
@@ -75,6 +76,7 @@ class Plan:
     status: str
     deviations: tuple[Deviation, ...]
     areas: LoadAreas
+    gaps: Gaps
     circuit: Circuit
     aims: Aims
     control: str
@@ -101,9 +103,9 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
     filed, changed = case.recipe, deviations(case.recipe, case.load.change)
     case = as_run(case)
     process = process_of(case)
-    areas = load_areas(case, process)
+    areas, gaps = load_areas(case, process), gaps_of(case, case.recipe.spacing or 0.0)
     if areas.parts_carrying <= 0.0:
-        return _nothing_wet(case, filed, changed, areas, circuit_of(case, areas, process))
+        return _nothing_wet(case, filed, changed, areas, gaps, circuit_of(case, areas, process))
     circuit = circuit_of(case, areas, process)
     job = job_of(case, process, areas, circuit.resistance)
     runner = runner_of(job)
@@ -119,6 +121,7 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
         [
             *check_deviations(changed),
             *check_load(job),
+            *check_gaps(gaps, case),
             *_run_findings(job, runner, proposal, circuit, thickness, emissions),
         ]
     )
@@ -129,6 +132,7 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
         status=effective_status(filed),
         deviations=changed,
         areas=areas,
+        gaps=gaps,
         circuit=circuit,
         aims=job.aims,
         control=runner.control,
@@ -141,7 +145,7 @@ def plan(case: Case, shares: PositionShares | None = None) -> Plan:
         findings=findings,
         binding=binding(findings),
         cautions=_cautions(case, areas, run, emissions),
-        figures=figures if outcome is None else {**figures, **outcome.figures},
+        figures={**figures, **gap_figures(gaps), **(outcome.figures if outcome else {})},
         position="default" if shares is None else "map",
     )
 
@@ -263,7 +267,12 @@ def _figures(
 
 
 def _nothing_wet(
-    case: Case, filed: Recipe, changed: tuple[Deviation, ...], areas: LoadAreas, circuit: Circuit
+    case: Case,
+    filed: Recipe,
+    changed: tuple[Deviation, ...],
+    areas: LoadAreas,
+    gaps: Gaps,
+    circuit: Circuit,
 ) -> Plan:
     """A load on which no part carries current: there is no number to set."""
     source = Source("areas of the load", Status.DERIVED)
@@ -271,7 +280,9 @@ def _nothing_wet(
     key, fix = ("level.nothing-wet", "level.raise") if dry else ("level.masked", "level.unmask")
     finding = Finding("level", Level.STOP, key, source, fix=fix)
     job = job_of(case, process_of(case), areas, circuit.resistance)
-    findings = ranked_findings([finding, *check_deviations(changed), *check_load(job)])
+    findings = ranked_findings(
+        [finding, *check_deviations(changed), *check_load(job), *check_gaps(gaps, case)]
+    )
     return Plan(
         case=case,
         filed=filed,
@@ -279,6 +290,7 @@ def _nothing_wet(
         status=effective_status(filed),
         deviations=changed,
         areas=areas,
+        gaps=gaps,
         circuit=circuit,
         aims=job.aims,
         control="voltage" if case.recipe.voltages else "current",
@@ -291,6 +303,6 @@ def _nothing_wet(
         findings=findings,
         binding=finding,
         cautions=_cautions(case, areas, None, None),
-        figures=area_figures(case, areas),
+        figures={**area_figures(case, areas), **gap_figures(gaps)},
         position="default",
     )

@@ -8,6 +8,7 @@ from lineplanner.inputs.values import Ranged
 from lineplanner.quantities import (
     COUNT,
     CURRENT_DENSITY,
+    LENGTH,
     RATIO,
     SURFACE_MASS,
     TEMPERATURE,
@@ -16,6 +17,7 @@ from lineplanner.quantities import (
     VOLTAGE,
     CurrentDensity,
     Field,
+    Length,
     Ratio,
     SurfaceMass,
     Temperature,
@@ -112,6 +114,9 @@ class Recipe:
         CurrentDensity | None, Field(CURRENT_DENSITY, "mean current density in the hold", above=0.0)
     ] = None
 
+    spacing: Annotated[
+        Length | None, Field(LENGTH, "least gap between parts", "by outlines in the rack plane", above=0.0)
+    ] = None
     soak: Annotated[Time | None, Field(TIME, "soak", "left out: by part mass", low=0.0)] = None
     reverse: Annotated[
         Literal["preset", "none", "own"], Field(None, "reverse etch", "own: density and time below")

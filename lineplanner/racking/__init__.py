@@ -5,11 +5,14 @@ tips.py     which tips are free, and which is the next one
 moves.py    to the next tip, once more, off, turned, to the other side, another part
 fields.py   a field of tips filled in a pattern
 spots.py    free positions: moved by steps of the grid, aligned, spaced evenly
+gaps.py     the gaps between parts, by their outlines; fit.py: what they are held against
 counts.py   one part more or less of an entry, another part in it
 """
 
 from lineplanner.racking.counts import exchanged, one_less, one_more
 from lineplanner.racking.fields import PATTERNS, Pattern, filled
+from lineplanner.racking.fit import check_gaps, gap_figures
+from lineplanner.racking.gaps import Gaps, gaps_of
 from lineplanner.racking.moves import added, again, faced, moved, reracked, sided, swapped, taken_off, turned
 from lineplanner.racking.places import Key, Racked, changed_places, places_of
 from lineplanner.racking.spots import aligned, spaced
@@ -18,6 +21,7 @@ from lineplanner.racking.tips import Direction, runs_of
 __all__ = [
     "PATTERNS",
     "Direction",
+    "Gaps",
     "Key",
     "Pattern",
     "Racked",
@@ -25,9 +29,12 @@ __all__ = [
     "again",
     "aligned",
     "changed_places",
+    "check_gaps",
     "exchanged",
     "faced",
     "filled",
+    "gap_figures",
+    "gaps_of",
     "moved",
     "one_less",
     "one_more",

@@ -144,7 +144,8 @@ def sided(load: Load, rack: Rack, keys: Sequence[Key]) -> Racked:
         wanted = ("front", "back") if side == "both" else (side,)
         tips = [name for key in hand for name in places[key].tips]
         reached = all(rows[name].row.side in ("both", side) for name in tips if name in rows)
-        if reached and all((name, one) not in others for name in tips for one in wanted):
+        alone = len(set(tips)) == len(tips)  # no two in hand share a tip
+        if reached and alone and all((name, one) not in others for name in tips for one in wanted):
             return _each(load, hand, lambda how, to=side: replace(how, side=to))  # type: ignore[misc]
     raise InputError("racking.no_side", rack=load.rack)
 

@@ -29,7 +29,7 @@ from lineplanner.report.words.reasons import surface_word
 
 LINES = 60
 NOTE_LINES = 3  # of a note on the card
-_NOT_CHECKED = "not checked: fit, gaps, tank depth"
+_NOT_CHECKED = "tank fit unchecked"
 NO_CURRENT = "the current stays off: a stop forbids this plan"
 RAMP_ROWS = 10
 THICKNESS_BLANKS = 5
@@ -148,7 +148,9 @@ def _watch(plan: Plan, style: Style) -> list[str]:
 
 def _below(plan: Plan, style: Style) -> list[str]:
     before = NO_CURRENT if plan.stopped else "; ".join(_before(plan, style))
-    hung = "; ".join([*places_said(plan, style), _NOT_CHECKED])
+    least = plan.gaps.least
+    gap = [] if least is None else [f"gaps from {style.show(least, LENGTH)}"]
+    hung = "; ".join([*places_said(plan, style), *gap, _NOT_CHECKED])
     lines = ["", *_notes(plan)]
     for head, text in (
         ("BEFORE CURRENT", before),

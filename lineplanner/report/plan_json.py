@@ -32,6 +32,21 @@ def plan_json(plan: Plan, style: Style) -> str:
     return json.dumps(plan_record(plan, style), indent=2, ensure_ascii=True, allow_nan=False)
 
 
+def _gaps(plan: Plan) -> Json:
+    """Gaps between parts, named by their numbers; null where no two hang side by side."""
+    gaps = plan.gaps
+    return {
+        "least_m": gaps.least,
+        "between": None if gaps.between is None else _said(gaps.between),
+        "overlapping": [_said(pair) for pair in gaps.overlapping],
+        "near": [_said(pair) for pair in gaps.near],
+    }
+
+
+def _said(pair: tuple[int, int]) -> str:
+    return f"{pair[0]} to {pair[1]}"
+
+
 def plan_record(plan: Plan, style: Style) -> Json:
     """The plan as the values that JSON holds."""
     rectifier = rectifier_of(plan)
@@ -73,6 +88,7 @@ def plan_record(plan: Plan, style: Style) -> Json:
             {"rectifier": name, "check": f and f.check, "level": f and f.level.value}
             for name, f in plan.others
         ],
+        "gaps": _gaps(plan),
     }
 
 

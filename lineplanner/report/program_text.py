@@ -5,7 +5,7 @@ from collections.abc import Iterable, Iterator
 from lineplanner.load import Item, Metal
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Run
-from lineplanner.quantities import AREA, MASS, RATE, RATIO, THICKNESS, Area
+from lineplanner.quantities import AREA, LENGTH, MASS, RATE, RATIO, THICKNESS, Area
 from lineplanner.report.digits import CHROME, amperes, charge, duration, hours, moment, volts
 from lineplanner.report.layout import columns, shortened, squeezed, wrapped
 from lineplanner.report.plan_json import COVERAGE
@@ -15,7 +15,7 @@ from lineplanner.report.words.names import work
 from lineplanner.report.words.reasons import surface_word
 
 NAME = 30  # characters of a name in a table
-NOT_CHECKED = "not checked by this version: fit, gaps between parts, tank depth"
+NOT_CHECKED = "not checked by this version: room to the tank's walls and floor"
 
 
 def program_lines(plan: Plan, style: Style) -> list[str]:
@@ -152,12 +152,21 @@ def areas_lines(plan: Plan, style: Style) -> list[str]:
         rows.append((name, str(len(metals)), each, *shown, ""))
     sums = (area_number(a, style) for a in (areas.wet, areas.carrying, areas.significant))
     rows.append(("together", "", "", *sums))
-    return [*columns(rows, right=(1, 2, 3, 4, 5)), *area_notes()]
+    return [*columns(rows, right=(1, 2, 3, 4, 5)), *area_notes(plan, style)]
 
 
-def area_notes() -> list[str]:
-    """What the areas do not say."""
-    return [f"  {NOT_CHECKED}"]
+def area_notes(plan: Plan, style: Style) -> list[str]:
+    """The least gap between parts, and what is not checked."""
+    gap = gap_said(plan, style)
+    return [f"  {text}" for text in (*([gap] if gap else []), NOT_CHECKED)]
+
+
+def gap_said(plan: Plan, style: Style) -> str:
+    """The least gap between parts and where it is; nothing where no two hang side by side."""
+    least, between = plan.gaps.least, plan.gaps.between
+    if least is None or between is None:
+        return ""
+    return f"least gap between parts {style.show(least, LENGTH)}, part {between[0]} to part {between[1]}"
 
 
 def area_unit(style: Style) -> str:

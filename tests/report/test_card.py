@@ -14,6 +14,7 @@ import pytest
 from lineplanner.inputs.values import Ranged
 from lineplanner.plan import Plan
 from lineplanner.program.stages import Stage
+from lineplanner.quantities import LENGTH
 from lineplanner.report.card import LINES, RAMP_ROWS, bath_said, card_lines, card_text, ramp_rows
 from lineplanner.report.layout import WIDTH
 from lineplanner.report.setpoints import caution_short, caution_text
@@ -152,7 +153,9 @@ def test_a_hard_chrome_card_says_what_an_outage_asks_for(each_load: Plan) -> Non
 
 def test_what_is_not_checked_stands_where_the_parts_are_hung(each_load: Plan) -> None:
     text = joined(card_lines(each_load, METRIC))
-    assert re.search(r" HANG [^:].*; not checked: fit, gaps, tank depth AREA ", text)
+    least = each_load.gaps.least
+    gaps = "" if least is None else f"; gaps from {METRIC.show(least, LENGTH)}"
+    assert re.search(rf" HANG [^:].*{re.escape(gaps)}; tank fit unchecked AREA ", text)
 
 
 def test_a_recipe_changed_since_its_approval_says_so_on_the_card(demo: Demo) -> None:

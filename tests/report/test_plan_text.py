@@ -100,7 +100,7 @@ def test_parts_of_one_name_are_told_apart_by_their_material(demo: Demo) -> None:
 
 
 def test_what_this_version_does_not_check_stands_under_the_areas(each_load: Plan) -> None:
-    said = "  not checked by this version: fit, gaps between parts, tank depth"
+    said = "  not checked by this version: room to the tank's walls and floor"
     assert areas_lines(each_load, METRIC)[-1] == said
 
 

@@ -130,7 +130,7 @@ def test_a_bar_is_full_at_the_limit_and_never_before() -> None:
 def test_the_areas_are_those_of_the_report(made: Plan) -> None:
     for style in STYLES:
         table, lines = areas_table(made, style), areas_lines(made, style)[1:]
-        assert area_notes() == lines[len(table.rows) :]
+        assert area_notes(made, style) == lines[len(table.rows) :]
         for row, line in zip(table.rows, lines, strict=False):
             for place in (1, 2, 6, 7, 8):
                 assert row.cells[place].partition(" ")[0] in line.split() or not row.cells[place]

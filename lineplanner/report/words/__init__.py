@@ -4,7 +4,7 @@ checks.py     what recipe, alloy and substrate say of a run, the window, the pip
 capacity.py   what rectifier, bus, contacts, rack, cooling and exhaust say
 reasons.py    why an area of a face is what it is
 errors.py     what cannot be computed
-racking.py    why a move of the hand is not possible
+racking.py    what the gaps between parts say, why a move of the hand is not possible
 names.py      checks, stages, processes and statuses as they are called
 
 Each module of sentences holds MESSAGES: key -> template with facts in braces.

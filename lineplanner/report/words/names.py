@@ -20,9 +20,19 @@ _CHECKS: Mapping[str, str] = {
     "preset": "start of the deposit",
     "growth-law": "growth law",
     "places": "hanging places",
+    "gaps": "gaps between parts",
 }
 _PLURAL = frozenset(
-    {"contacts", "joints", "volts", "bolted joints", "saddles", "hanging places", "titanium volts"}
+    {
+        "contacts",
+        "joints",
+        "volts",
+        "bolted joints",
+        "saddles",
+        "hanging places",
+        "titanium volts",
+        "gaps between parts",
+    }
 )
 _WORK: Mapping[str, str] = {"work anodic": "work +", "work cathodic": "work -", "off": "off"}
 _PROCESSES: Mapping[str, str] = {

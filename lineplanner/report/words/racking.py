@@ -1,6 +1,11 @@
-"""Why a move of the hand is not possible: what is in the way, what to do."""
+"""What the gaps between parts say, and why a move of the hand is not possible."""
 
 MESSAGES = {
+    "gaps.overlap": "parts {one} and {other} overlap (pairs that do: {count}); where they touch nothing grows and "
+    "the rest takes their current",
+    "gaps.apart": "Hang them apart",
+    "gaps": "{least} between parts {one} and {other}, the recipe asks for {asked} (pairs closer: {count})",
+    "gaps.wider": "Hang them wider, or leave tips free between them",
     "racking.none": "no part is in hand. Choose one first",
     "racking.last": "one part stays: a load holds at least one",
     "racking.last_of_entry": "one part is left here: take the whole entry out in the records",

@@ -143,7 +143,7 @@ class AreasView(TableLoadView):
 
     def show(self, session: Session, moved: frozenset[str]) -> None:
         super().show(session, moved)
-        notes = area_notes()
+        notes = area_notes(session.plan, session.style)
         self.query_one("#said", Static).update(self.lines(line.strip() for line in notes))
 
     def table(self, session: Session) -> Table:

@@ -1,0 +1,174 @@
+"""Gaps between the parts of a load, by their outlines in the rack plane, one side of the rack at a time."""
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Any, NamedTuple
+
+import numpy as np
+import shapely
+from numpy.typing import NDArray
+from shapely import Polygon, STRtree
+from shapely.affinity import translate
+
+from lineplanner.geometry import Pose, extent, shape_of, silhouette
+from lineplanner.inputs.case import Case
+from lineplanner.inputs.hanging import spots_of, tip_places
+from lineplanner.inputs.memo import Memo
+from lineplanner.inputs.part import Part
+from lineplanner.quantities import Angle, Length
+
+Array = NDArray[np.float64]
+Indices = NDArray[np.int64]
+Pair = tuple[int, int]
+"""Two parts by their numbers as the picture and the card count them, from 1."""
+
+_FINE: Length = 5e-5  # chords stay within this of their arc: a gap is not wider than so much more
+_TOUCH: Length = 1e-6  # outlines that meet by less than this do not overlap
+_DIGITS = 7  # decimals of an offset or a gap in m: what is smaller is noise
+_OUTLINES: Memo[Part, Polygon] = Memo(1024)
+_DISTANCES: Memo[Part, tuple[Part, Length]] = Memo(8192)
+
+
+class _Kind(NamedTuple):
+    """How a part hangs, apart from where."""
+
+    part: Part
+    turn: Angle
+    edge_on: bool
+
+    @property
+    def key(self) -> tuple[int, Angle, bool]:
+        """Equal for kinds of the same record; the record has to be kept beside it."""
+        return id(self.part), self.turn, self.edge_on
+
+
+class _Side(NamedTuple):
+    """The parts on one side of the rack: their numbers, kinds by index, hanging points (n, 2) in m, y up."""
+
+    numbers: Indices
+    kinds: Indices
+    points: Array
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Gaps:
+    """The least gap in m between two parts of one side, and which they are; None where no two hang there.
+
+    overlapping and near are the pairs whose outlines overlap, and those closer than what was asked for.
+    """
+
+    least: Length | None = None
+    between: Pair | None = None
+    overlapping: tuple[Pair, ...] = ()
+    near: tuple[Pair, ...] = ()
+
+
+def gaps_of(case: Case, wanted: Length = 0.0) -> Gaps:
+    """The gaps of a load; wanted is the least gap in m that the recipe asks for.
+
+    A part is taken as its outer outline: what hangs inside the opening of another counts as overlapping.
+    """
+    kinds, sides = _sides(case)
+    least: tuple[Length, Pair] | None = None
+    overlapping: list[Pair] = []
+    near: list[Pair] = []
+    for side in sides:
+        pairs, gaps = _pairs(side, kinds, wanted)
+        if not len(gaps):
+            continue
+        first = int(np.argmin(gaps))
+        if least is None or gaps[first] < least[0]:
+            least = float(gaps[first]), _pair(pairs[first])
+        overlapping += [_pair(pair) for pair in pairs[gaps < 0.0]]
+        near += [_pair(pair) for pair in pairs[(gaps >= 0.0) & (gaps < wanted)]]
+    if least is None:
+        return Gaps()
+    return Gaps(
+        least=max(least[0], 0.0),
+        between=least[1],
+        overlapping=tuple(sorted(overlapping)),
+        near=tuple(sorted(near)),
+    )
+
+
+def _pair(numbers: Indices) -> Pair:
+    return int(numbers[0]), int(numbers[1])
+
+
+def _sides(case: Case) -> tuple[list[_Kind], list[_Side]]:
+    """Every part that has a place, numbered as in the picture: the kinds, and the parts side by side."""
+    places, number = tip_places(case.rack), 0
+    kinds: dict[tuple[int, Angle, bool], int] = {}
+    known: list[_Kind] = []
+    columns: dict[str, list[Array]] = {"front": [], "back": []}
+    for hang in case.load.hangs:
+        if hang.count is not None:
+            continue
+        kind = _Kind(case.parts[hang.part], hang.turn, hang.facing == "edge-on")
+        if kind.key not in kinds:
+            kinds[kind.key] = len(known)
+            known.append(kind)
+        sides = ("front", "back") if hang.side == "both" else (hang.side,)
+        spots = np.array(spots_of(hang, places)).reshape(-1, 2)
+        for place, side in enumerate(sides):
+            numbers = number + 1 + place + len(sides) * np.arange(len(spots))
+            index = np.full(len(spots), kinds[kind.key])
+            columns[side].append(np.column_stack((numbers, index, spots[:, 0], -spots[:, 1])))
+        number += len(sides) * len(spots)
+    found = []
+    for held in columns.values():
+        rows = np.concatenate(held) if held else np.empty((0, 4))
+        found.append(_Side(rows[:, 0].astype(np.int64), rows[:, 1].astype(np.int64), rows[:, 2:]))
+    return known, found
+
+
+def _pairs(side: _Side, kinds: Sequence[_Kind], wanted: Length) -> tuple[Indices, Array]:
+    """Numbers (m, 2) and gaps (m) of all pairs that may have the least gap, or one below what is wanted.
+
+    Boxes are never farther apart than the outlines in them: the least gap is among boxes that are as near as
+    the nearest outlines of parts that follow each other. A gap below 0 is an overlap.
+    """
+    if len(side.numbers) < 2:
+        return np.empty((0, 2), dtype=np.int64), np.empty(0)
+    at_origin = np.array([extent(shape_of(kind.part), _pose(kind)) for kind in kinds])
+    boxes: Any = shapely.box(*(at_origin[side.kinds] + np.hstack((side.points, side.points))).T)
+    each = np.arange(len(side.numbers))
+    bound = float(_gaps(side, kinds, each[:-1], each[1:]).min())
+    one, other = STRtree(boxes).query(boxes, predicate="dwithin", distance=max(bound, wanted, 0.0) + _TOUCH)
+    one, other = one[one < other], other[one < other]
+    return np.column_stack((side.numbers[one], side.numbers[other])), _gaps(side, kinds, one, other)
+
+
+def _gaps(side: _Side, kinds: Sequence[_Kind], one: Indices, other: Indices) -> Array:
+    """The gap of each pair; neighbours of one kind at one offset are measured once."""
+    steps = np.round((side.points[other] - side.points[one]) * 10**_DIGITS).astype(np.int64)
+    alike = np.column_stack((side.kinds[one], side.kinds[other], steps))
+    unlike, whose = np.unique(alike, axis=0, return_inverse=True)
+    found = [_gap(kinds[i], kinds[j], across, up) for i, j, across, up in unlike.tolist()]
+    return np.array(found)[whose.ravel()]
+
+
+def _gap(one: _Kind, other: _Kind, across: int, up: int) -> Length:
+    """The distance of two outlines in m; -1 where they overlap. Offsets in steps of the last decimal."""
+    key = (*one.key, *other.key, across, up)
+    step = 10.0**-_DIGITS
+    return _DISTANCES.get(one.part, key, lambda: _apart(one, other, across * step, up * step))[1]
+
+
+def _pose(kind: _Kind) -> Pose:
+    return Pose(0.0, 0.0, kind.turn, kind.edge_on)
+
+
+def _outline(kind: _Kind) -> Polygon:
+    """The outer outline of a part hung at the origin."""
+    return _OUTLINES.get(
+        kind.part, (kind.turn, kind.edge_on), lambda: Polygon(silhouette(kind.part, _pose(kind), _FINE)[0])
+    )
+
+
+def _apart(one: _Kind, other: _Kind, across: Length, up: Length) -> tuple[Part, Length]:
+    """The distance, and the other part: as long as it is kept its identity is no other's."""
+    first, second = _outline(one), translate(_outline(other), across, up)
+    if first.intersects(second) and first.intersection(second).area > _TOUCH**2:
+        return other.part, -1.0
+    return other.part, round(float(first.distance(second)), _DIGITS)
