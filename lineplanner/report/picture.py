@@ -38,7 +38,8 @@ _MEMBERS: Memo[Rack, "list[Array]"] = Memo(64)
 class Hung(NamedTuple):
     """One part as it hangs; owner is its row in the picture, number its label, twin what hangs behind or before it.
 
-    box is left, low, right and high of its outline, at its hanging point; both in m.
+    box is left, low, right and high of its outline, at its hanging point; both in m. close says that it overlaps
+    another part, or is nearer to one than the recipe allows.
     """
 
     owner: int
@@ -54,6 +55,7 @@ class Hung(NamedTuple):
     at: tuple[Length, Length]
     box: Box
     twin: int | None = None
+    close: bool = False
 
     @property
     def centre(self) -> tuple[Length, Length]:
@@ -62,13 +64,13 @@ class Hung(NamedTuple):
     @property
     def labels(self) -> tuple[str, ...]:
         """What may stand on the part, fullest first: its number, b for the back, whether it is dry."""
-        short = f"{self.number}{'b' if self.side == 'back' else ''}"
+        short = f"{self.number}{'b' if self.side == 'back' else ''}{'!' if self.close else ''}"
         full = [f"{short} dry"] if self.wetness == "dry" else []
         if self.twin is not None and self.side == "front":
             behind = f"{short} {self.twin + 1}b"
             full = [f"{behind} dry", behind] if full else [behind]
             full += [f"{short}+b"]
-        return (*full, short)
+        return (*full, short, *(["!"] if self.close else []))
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -157,6 +159,8 @@ def scene_of(plan: Plan) -> Scene:
     parts: list[Hung] = []
     for hanging in hangs:
         parts += hanging.parts(len(parts))
+    for number in {number for pair in (*plan.gaps.overlapping, *plan.gaps.near) for number in pair}:
+        parts[number - 1] = parts[number - 1]._replace(close=True)
     edges = _joined([_tiled(hanging.drawn.outline, hanging.shifts) for hanging in hangs])
     lengths = [n for hanging in hangs for n in [len(hanging.drawn.outline)] * hanging.count]
     owners = np.repeat(np.arange(len(parts), dtype=np.int32), lengths)

@@ -285,3 +285,14 @@ def test_no_size_and_no_view_breaks_it(
     for selected in (None, 0, len(shown.parts) - 1):
         text = lines(drawn, selected)
         assert [len(line) for line in text] == [columns] * rows
+
+
+def test_parts_too_close_carry_a_sign_and_the_key_says_what_it_is() -> None:
+    case = LIBRARY.case("valve-blocks-24")  # 75 mm between rows
+    near = plan(replace(case, recipe=replace(case.recipe, spacing=0.078)))
+    shown = scene_of(near)
+    assert all(hung.close for hung in shown.parts)
+    wide = "\n".join(lines(cells(shown, 160, 48)))
+    assert "13!" in wide
+    assert "! overlaps or too near" in wide
+    assert "overlaps" not in "\n".join(lines(cells(scene_of(plan(case)), 160, 48)))

@@ -70,6 +70,11 @@ class HangingScreen(PlannerScreen):
     hanging = False
 
     @property
+    def hinted_first(self) -> frozenset[str]:
+        """Actions whose keys are told first."""
+        return _WHILE_HANGING | {"hang"} if self.hanging else frozenset()
+
+    @property
     def rack_view(self) -> RackView | None:
         """The picture, where it is in sight."""
         raise NotImplementedError

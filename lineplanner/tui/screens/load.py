@@ -41,11 +41,12 @@ class LoadScreen(HangingScreen):
     CSS_PATH = ["load.tcss", *(f"../widgets/{name}.tcss" for name in WIDGETS)]  # noqa: RUF012 - as textual does
     AUTO_FOCUS = ""
     BINDINGS: ClassVar[list[BindingType]] = [
-        *KEYS,
         Binding("question_mark", "why", "why"),
+        KEYS[0],
         Binding("u", "app.units", "units"),
         Binding("plus,equals_sign", "count(1)", "one more"),
         Binding("minus", "count(-1)", "one less"),
+        *KEYS[1:],
         Binding("w", "swap", "swap part"),
         Binding("e", "edit", "edit"),
         Binding("z", "undo", "undo"),

@@ -55,7 +55,11 @@ class Hints(KeptLines):
     def _hints(self) -> list[tuple[str, str]]:
         """Key and what it does, each action once, in the order of the bindings."""
         found: dict[str, tuple[str, str]] = {}
-        bindings = sorted(self.screen.active_bindings.items(), key=lambda one: one[1].node is self.app)
+        first: frozenset[str] = getattr(self.screen, "hinted_first", frozenset())
+        bindings = sorted(
+            self.screen.active_bindings.items(),
+            key=lambda one: (one[1].node is self.app, one[1].binding.action.partition("(")[0] not in first),
+        )
         for key, active in bindings:
             if active.binding.show and active.enabled:
                 found.setdefault(active.binding.action, (key_said(key), active.binding.description))

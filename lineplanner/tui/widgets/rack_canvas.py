@@ -44,6 +44,7 @@ class RackCanvas(Widget, can_focus=True):
         & > .rack-canvas--tip { color: $foreground-muted; }
         & > .rack-canvas--number { color: $foreground; }
         & > .rack-canvas--note { color: $foreground-muted; }
+        & > .rack-canvas--close { color: $error; text-style: bold; }
         & > .rack-canvas--selected { color: $accent; text-style: bold; }
         & > .rack-canvas--selected-number { color: $accent; text-style: bold reverse; }
     }

@@ -26,6 +26,7 @@ _KEY = {
     "o": "free tip",
     "*": "contact",
     "b": "on the back",
+    "!": "overlaps or too near",
     "+": "edge of the rack",
 }
 
@@ -46,6 +47,7 @@ class Ink(IntEnum):
     SELECTED = 10
     SELECTED_NUMBER = 11
     FRAME = 12
+    CLOSE = 13
 
 
 class Cells:
@@ -326,8 +328,9 @@ class Cells:
     def _marks(self) -> set[str]:
         """The marks of the key that stand in the picture."""
         marked = np.isin(self.inks, (Ink.MASKED, Ink.TIP, Ink.DRY, Ink.FRAME))
-        back = {"b"} if any(hung.side == "back" for hung in self.scene.parts) else set()
-        return {chr(code) for code in np.unique(self.codes[marked])} - {"b"} | back
+        found = {chr(code) for code in np.unique(self.codes[marked])} - {"b", "!"}
+        found |= {"b"} if any(hung.side == "back" for hung in self.scene.parts) else set()
+        return found | ({"!"} if any(hung.close for hung in self.scene.parts) else set())
 
     def _gap(self, row: int, text: str) -> int:
         """The first column from which a text covers no part, else the first."""
@@ -341,6 +344,8 @@ class Cells:
 
 
 def _ink_of(hung: Hung) -> Ink:
+    if hung.close:
+        return Ink.CLOSE
     return Ink.DRY if hung.wetness == "dry" else Ink.BACK if hung.side == "back" else Ink.PART
 
 
