@@ -123,6 +123,30 @@ def card_command(load: str, **rest: Any) -> Output:
     return site.output(card_text(made, site.style), STOPPED if made.stopped else 0)
 
 
+@lineplanner.command("fill")
+@click.argument("load")
+@click.option("--part", required=True, metavar="PART", help="The part to hang more of.")
+@click.option("--json", "as_json", is_flag=True, help="Stable keys, SI units.")
+@common
+def fill_command(load: str, part: str, *, as_json: bool, **rest: Any) -> Output:
+    """How many more of a part fit on the rack, how many the line carries, and what stops one more."""
+    from lineplanner.advice import how_many_more
+    from lineplanner.racking import with_first
+    from lineplanner.report.more_text import more_json, more_text
+
+    site = opened(_options(**rest))
+    case = site.library.case(load)
+    entry = next((n for n, hang in enumerate(case.load.hangs) if hang.part == part), None)
+    key = (entry or 0, 0)
+    if entry is None:
+        record = site.library.record("part", part)
+        case, key = with_first(case, part, record, site.library.record("material", record.material))
+    more = how_many_more(case, key)
+    if as_json:
+        return Output(more_json(more, site.plain), STOPPED if more.made.stopped else 0)
+    return site.output(more_text(more, site.style), STOPPED if more.made.stopped else 0)
+
+
 @lineplanner.command("area")
 @click.argument("file")
 @click.option("--json", "as_json", is_flag=True, help="Stable keys, SI units.")

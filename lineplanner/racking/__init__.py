@@ -5,6 +5,7 @@ tips.py     which tips are free, and which is the next one
 moves.py    to the next tip, once more, off, turned, to the other side, another part
 fields.py   a field of tips filled in a pattern
 spots.py    free positions: moved by steps of the grid, aligned, spaced evenly
+room.py     where else a part may hang
 gaps.py     the gaps between parts, by their outlines; fit.py: what they are held against
 counts.py   one part more or less of an entry, another part in it
 """
@@ -15,6 +16,7 @@ from lineplanner.racking.fit import check_gaps, gap_figures
 from lineplanner.racking.gaps import Gaps, gaps_of
 from lineplanner.racking.moves import added, again, faced, moved, reracked, sided, swapped, taken_off, turned
 from lineplanner.racking.places import Key, Racked, changed_places, places_of
+from lineplanner.racking.room import room_for, with_first
 from lineplanner.racking.spots import aligned, spaced
 from lineplanner.racking.tips import Direction, runs_of
 
@@ -40,10 +42,12 @@ __all__ = [
     "one_more",
     "places_of",
     "reracked",
+    "room_for",
     "runs_of",
     "sided",
     "spaced",
     "swapped",
     "taken_off",
     "turned",
+    "with_first",
 ]

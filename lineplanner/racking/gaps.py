@@ -13,6 +13,7 @@ from shapely.affinity import translate
 from lineplanner.geometry import Pose, extent, shape_of, silhouette
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.hanging import spots_of, tip_places
+from lineplanner.inputs.load import Hang
 from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part
 from lineplanner.quantities import Angle, Length
@@ -29,7 +30,7 @@ _OUTLINES: Memo[Part, Polygon] = Memo(1024)
 _DISTANCES: Memo[Part, tuple[Part, Length]] = Memo(8192)
 
 
-class _Kind(NamedTuple):
+class Kind(NamedTuple):
     """How a part hangs, apart from where."""
 
     part: Part
@@ -95,16 +96,16 @@ def _pair(numbers: Indices) -> Pair:
     return int(numbers[0]), int(numbers[1])
 
 
-def _sides(case: Case) -> tuple[list[_Kind], list[_Side]]:
+def _sides(case: Case) -> tuple[list[Kind], list[_Side]]:
     """Every part that has a place, numbered as in the picture: the kinds, and the parts side by side."""
     places, number = tip_places(case.rack), 0
     kinds: dict[tuple[int, Angle, bool], int] = {}
-    known: list[_Kind] = []
+    known: list[Kind] = []
     columns: dict[str, list[Array]] = {"front": [], "back": []}
     for hang in case.load.hangs:
         if hang.count is not None:
             continue
-        kind = _Kind(case.parts[hang.part], hang.turn, hang.facing == "edge-on")
+        kind = kind_of(case, hang)
         if kind.key not in kinds:
             kinds[kind.key] = len(known)
             known.append(kind)
@@ -122,7 +123,7 @@ def _sides(case: Case) -> tuple[list[_Kind], list[_Side]]:
     return known, found
 
 
-def _pairs(side: _Side, kinds: Sequence[_Kind], wanted: Length) -> tuple[Indices, Array]:
+def _pairs(side: _Side, kinds: Sequence[Kind], wanted: Length) -> tuple[Indices, Array]:
     """Numbers (m, 2) and gaps (m) of all pairs that may have the least gap, or one below what is wanted.
 
     Boxes are never farther apart than the outlines in them: the least gap is among boxes that are as near as
@@ -130,7 +131,7 @@ def _pairs(side: _Side, kinds: Sequence[_Kind], wanted: Length) -> tuple[Indices
     """
     if len(side.numbers) < 2:
         return np.empty((0, 2), dtype=np.int64), np.empty(0)
-    at_origin = np.array([extent(shape_of(kind.part), _pose(kind)) for kind in kinds])
+    at_origin = np.array([box_of(kind) for kind in kinds])
     boxes: Any = shapely.box(*(at_origin[side.kinds] + np.hstack((side.points, side.points))).T)
     each = np.arange(len(side.numbers))
     bound = float(_gaps(side, kinds, each[:-1], each[1:]).min())
@@ -139,7 +140,7 @@ def _pairs(side: _Side, kinds: Sequence[_Kind], wanted: Length) -> tuple[Indices
     return np.column_stack((side.numbers[one], side.numbers[other])), _gaps(side, kinds, one, other)
 
 
-def _gaps(side: _Side, kinds: Sequence[_Kind], one: Indices, other: Indices) -> Array:
+def _gaps(side: _Side, kinds: Sequence[Kind], one: Indices, other: Indices) -> Array:
     """The gap of each pair; neighbours of one kind at one offset are measured once."""
     steps = np.round((side.points[other] - side.points[one]) * 10**_DIGITS).astype(np.int64)
     alike = np.column_stack((side.kinds[one], side.kinds[other], steps))
@@ -148,25 +149,40 @@ def _gaps(side: _Side, kinds: Sequence[_Kind], one: Indices, other: Indices) -> 
     return np.array(found)[whose.ravel()]
 
 
-def _gap(one: _Kind, other: _Kind, across: int, up: int) -> Length:
-    """The distance of two outlines in m; -1 where they overlap. Offsets in steps of the last decimal."""
+def kind_of(case: Case, hang: Hang) -> Kind:
+    """The kind of the parts of an entry."""
+    return Kind(case.parts[hang.part], hang.turn, hang.facing == "edge-on")
+
+
+def box_of(kind: Kind) -> tuple[Length, Length, Length, Length]:
+    """Left, low, right, high of a part hung at the origin, in m."""
+    return extent(shape_of(kind.part), _pose(kind))
+
+
+def gap(one: Kind, other: Kind, across: Length, up: Length) -> Length:
+    """The distance in m of two outlines, the second hung so far off the first; -1 where they overlap."""
+    return _gap(one, other, round(across * 10**_DIGITS), round(up * 10**_DIGITS))
+
+
+def _gap(one: Kind, other: Kind, across: int, up: int) -> Length:
+    """The same with offsets in steps of the last decimal; each is measured once."""
     key = (*one.key, *other.key, across, up)
     step = 10.0**-_DIGITS
     return _DISTANCES.get(one.part, key, lambda: _apart(one, other, across * step, up * step))[1]
 
 
-def _pose(kind: _Kind) -> Pose:
+def _pose(kind: Kind) -> Pose:
     return Pose(0.0, 0.0, kind.turn, kind.edge_on)
 
 
-def _outline(kind: _Kind) -> Polygon:
+def _outline(kind: Kind) -> Polygon:
     """The outer outline of a part hung at the origin."""
     return _OUTLINES.get(
         kind.part, (kind.turn, kind.edge_on), lambda: Polygon(silhouette(kind.part, _pose(kind), _FINE)[0])
     )
 
 
-def _apart(one: _Kind, other: _Kind, across: Length, up: Length) -> tuple[Part, Length]:
+def _apart(one: Kind, other: Kind, across: Length, up: Length) -> tuple[Part, Length]:
     """The distance, and the other part: as long as it is kept its identity is no other's."""
     first, second = _outline(one), translate(_outline(other), across, up)
     if first.intersects(second) and first.intersection(second).area > _TOUCH**2:

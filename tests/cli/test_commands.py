@@ -138,6 +138,29 @@ def test_areas_are_printed_for_a_part_a_rack_and_a_load(run: Run) -> None:
     assert (done.returncode, done.stdout) == (2, "")
 
 
+def test_how_many_more_fit_and_are_carried_is_printed(run: Run) -> None:
+    done = run("fill", "guide-pins-flash", "--part", "guide-pin")
+    assert (done.returncode, done.stderr) == (0, "")
+    lines = done.stdout.splitlines()
+    assert re.match(r"guide pin 16: \d+ more fit at the gap of 41 mm that hangs there", lines[0])
+    assert any(line.startswith("SET  ") for line in lines)
+    record = json.loads(run("fill", "guide-pins-flash", "--part", "guide-pin", "--json").stdout)
+    assert record["format"] == "lineplanner fill 1"
+    assert record["carried"] == record["fits"] > 0
+    assert record["stop"] is None
+    assert record["plan"]["area"]["items"][0]["count"] == 24 + record["carried"]
+    assert f"{record['plan']['current']['panel_set_A']:.0f} A" in done.stdout
+
+
+def test_more_of_a_part_that_does_not_hang_yet_begins_with_one(run: Run) -> None:
+    done = run("fill", "valve-blocks-24", "--part", "lug")
+    assert (done.returncode, done.stdout) == (2, "")  # every tip is taken
+    assert "no free tip is left on rack spline-24" in done.stderr
+    done = run("fill", "valve-blocks-24", "--part", "nut")
+    assert done.returncode == 2
+    assert run("fill", "valve-blocks-24").returncode == 2  # which part is not said
+
+
 def test_sources_follow_the_units_asked_for(run: Run) -> None:
     assert "coolest bake of the chart: 374 °F " in run("sources", "--units", "us").stdout
     assert "coolest bake of the chart: 190 °C " in run("sources", "--units", "metric").stdout

@@ -169,3 +169,23 @@ def test_leaving_a_question_makes_no_load(shop: Path) -> None:
         assert sorted((shop / "rack_library" / "loads").iterdir()) == before
 
     drive(steps, shop)
+
+
+def test_how_many_more_is_told_and_hung_in_one_step(shop: Path) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*"valve", "enter", "h", "N", "delete", "delete", "m")
+        await pilot.pause()
+        shown = text_on(pilot)
+        assert "2 more fit without overlapping" in shown
+        assert "the line carries all of them" in shown
+        await pilot.press("h")
+        await pilot.pause()
+        screen = load_screen(pilot)
+        assert tips(screen) == [("A1-A4", "B1-B4", "C1-C4", "D1-D4", "E1-E4", "F1-F4")]
+        assert not screen.session.dirty
+        await pilot.press("m")
+        await pilot.pause()
+        assert "0 more fit" in text_on(pilot)
+        await pilot.press("escape")
+
+    drive(steps, shop)

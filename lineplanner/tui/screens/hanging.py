@@ -28,11 +28,12 @@ from lineplanner.racking import (
     taken_off,
     turned,
 )
-from lineplanner.tui.screens.ask import PickScreen, PromptScreen
+from lineplanner.tui.screens.ask import AskScreen, PickScreen, PromptScreen
 from lineplanner.tui.screens.base import PlannerScreen
 from lineplanner.tui.widgets.rack_view import RackView
 
 if TYPE_CHECKING:
+    from lineplanner.advice import More
     from lineplanner.inputs.load import Load
     from lineplanner.inputs.rack import Rack
     from lineplanner.tui.widgets.hand import Hand
@@ -43,6 +44,7 @@ TURN = math.pi / 2
 KEYS = (
     Binding("h", "hang", "hang"),
     Binding("full_stop", "again", "once more"),
+    Binding("m", "more", "how many more", show=False),
     Binding("a", "add", "add part"),
     Binding("o", "fill", "fill field"),
     Binding("delete,backspace", "take_off", "take off"),
@@ -61,7 +63,7 @@ KEYS = (
     *(Binding(digit, f"times('{digit}')", show=False) for digit in "0123456789"),
 )
 """Keys of the hand; all but the first are in force only while parts are being hung."""
-_WHILE_HANGING = frozenset(one.action.partition("(")[0] for one in KEYS) - {"hang"}
+_WHILE_HANGING = frozenset(one.action.partition("(")[0] for one in KEYS) - {"hang", "more"}
 
 
 class HangingScreen(PlannerScreen):
@@ -258,6 +260,32 @@ class HangingScreen(PlannerScreen):
         if name is not None:
             new = self.session.library.record("rack", name)
             self.move(lambda load, rack: reracked(load, rack, new, name), f"all on rack {name}")
+
+    def action_more(self) -> None:
+        """How many more of the part in hand; hung in one step if wanted."""
+        from lineplanner.advice import how_many_more
+        from lineplanner.report.more_text import more_lines
+
+        view = self.rack_view
+        key = None if view is None else next(iter(view.hand.keys), None)
+        if key is None:
+            self.say("no part is chosen on the picture")
+            return
+        more = how_many_more(self.session.case, key)
+        answers = [("q", "leave the load as it is", "stay")]
+        if more.carried:
+            answers.insert(0, ("h", f"hang {more.carried} more", "hang"))
+        ask = AskScreen(
+            "How many more",
+            more_lines(more, self.session.style),
+            answers,
+            ascii_only=self.session.style.ascii,
+        )
+        self.app.push_screen(ask, partial(self._more, more))
+
+    def _more(self, more: More, answer: str | None) -> None:
+        if answer == "hang":
+            self.move(lambda _load, _rack: more.racked, f"{more.carried} parts more")
 
     def _pick(self, question: str, choices: list[tuple[str, str]], then: Callable[..., None]) -> None:
         self.app.push_screen(PickScreen(question, choices, ascii_only=self.session.style.ascii), then)
