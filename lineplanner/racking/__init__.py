@@ -11,10 +11,21 @@ counts.py   one part more or less of an entry, another part in it
 """
 
 from lineplanner.racking.counts import exchanged, one_less, one_more
-from lineplanner.racking.fields import PATTERNS, Pattern, filled
+from lineplanner.racking.fields import PATTERNS, Pattern, field_between, filled
 from lineplanner.racking.fit import check_gaps, gap_figures
 from lineplanner.racking.gaps import Gaps, gaps_of
-from lineplanner.racking.moves import added, again, faced, moved, reracked, sided, swapped, taken_off, turned
+from lineplanner.racking.moves import (
+    added,
+    again,
+    faced,
+    moved,
+    put,
+    reracked,
+    sided,
+    swapped,
+    taken_off,
+    turned,
+)
 from lineplanner.racking.places import Key, Racked, changed_places, places_of
 from lineplanner.racking.room import room_for, with_first
 from lineplanner.racking.spots import aligned, spaced
@@ -34,6 +45,7 @@ __all__ = [
     "check_gaps",
     "exchanged",
     "faced",
+    "field_between",
     "filled",
     "gap_figures",
     "gaps_of",
@@ -41,6 +53,7 @@ __all__ = [
     "one_less",
     "one_more",
     "places_of",
+    "put",
     "reracked",
     "room_for",
     "runs_of",

@@ -8,7 +8,7 @@ from typing import Literal
 from lineplanner.errors import InputError
 from lineplanner.inputs.hanging import Tip, tip_places
 from lineplanner.inputs.load import Load
-from lineplanner.inputs.rack import Rack
+from lineplanner.inputs.rack import Rack, Spot
 from lineplanner.racking.places import Key, Racked, in_hand, places_of, racked
 from lineplanner.racking.tips import free_groups, sides_of, taken_of
 
@@ -40,6 +40,17 @@ def filled(load: Load, rack: Rack, key: Key, pattern: Pattern, field: str = "") 
     if not new:
         raise InputError("racking.field_full")
     return racked(load, [*places.values(), *new], new[-1:])
+
+
+def field_between(rack: Rack, one: Spot, other: Spot) -> str:
+    """The field of tips between two spots, by its corners; empty where no tip lies there."""
+    (left, right), (high, low) = (sorted(pair) for pair in zip(one, other, strict=True))
+    inside = [tip for tip in tip_places(rack).values() if left <= tip.x <= right and high <= tip.drop <= low]
+    if not inside:
+        return ""
+    first = min(inside, key=lambda tip: (tip.drop + tip.x, tip.drop))
+    last = max(inside, key=lambda tip: (tip.drop + tip.x, tip.drop))
+    return f"{first.name}-{last.name}"
 
 
 def _field(rack: Rack, field: str) -> list[Tip]:

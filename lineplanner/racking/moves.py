@@ -10,7 +10,7 @@ from dataclasses import replace
 from lineplanner.errors import InputError
 from lineplanner.inputs.hanging import tip_places
 from lineplanner.inputs.load import Hang, Load
-from lineplanner.inputs.rack import Rack
+from lineplanner.inputs.rack import Rack, Spot
 from lineplanner.quantities import Angle
 from lineplanner.racking.places import Key, Place, Racked, in_hand, places_of, racked
 from lineplanner.racking.spots import shifted, spot_again
@@ -51,7 +51,33 @@ def _to_next(
     group = next_group(rack, first.how, first.tips, taken, direction)
     if group is None:
         raise InputError("racking.no_tip_there", direction=direction, rack=load.rack)
-    spots = tip_places(rack)
+    _to_tips(rack, places, hand, group, taken)
+
+
+def put(load: Load, rack: Rack, keys: Sequence[Key], spot: Spot) -> Racked:
+    """The first part in hand on the free tips nearest to a spot, or at that spot, the others by the same way."""
+    places = places_of(load)
+    hand = in_hand(places, keys)
+    first = places[hand[0]]
+    if first.at is not None:
+        steps = [round((to - at) / rack.grid) for to, at in zip(spot, first.at, strict=True)]
+        return shifted(load, rack, hand, (steps[0], steps[1]), 1)
+    taken = _taken_by([place for key, place in places.items() if key not in set(hand)])
+    tips = tip_places(rack)
+    groups = list(free_groups(rack, first.how, taken))
+    group = min(groups, key=lambda one: math.dist(middle(tips, one), spot), default=None)
+    if group is None:
+        raise InputError("racking.no_tip", rack=load.rack)
+    changed = dict(places)
+    _to_tips(rack, changed, hand, group, taken)
+    return racked(load, list(changed.values()), [changed[key] for key in hand])
+
+
+def _to_tips(
+    rack: Rack, places: dict[Key, Place], hand: Sequence[Key], group: tuple[str, ...], taken: Taken
+) -> None:
+    """The first part in hand on some tips, the others by the same way."""
+    first, spots = places[hand[0]], tip_places(rack)
     here, there = middle(spots, first.tips), middle(spots, group)
     places[hand[0]] = replace(first, tips=group)
     used = taken | _taken_by([places[hand[0]]])
@@ -63,7 +89,7 @@ def _to_next(
             None,
         )
         if found is None:
-            raise InputError("racking.not_all_there", count=len(hand), direction=direction)
+            raise InputError("racking.not_all_there", count=len(hand))
         places[key] = replace(places[key], tips=found)
         used |= _taken_by([places[key]])
 

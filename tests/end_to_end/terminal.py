@@ -111,6 +111,22 @@ class Terminal:
         os.write(self.handle, text.encode())
         return self.until(seen)
 
+    def mouse(self, *steps: tuple[int, int], seen: str | Callable[[str], bool]) -> str:
+        """Press the left button at the first cell (from 0), drag over the others, let go at the last."""
+        for code, last, (column, row) in (
+            (0, "M", steps[0]),
+            *((32, "M", step) for step in steps[1:]),
+            (0, "m", steps[-1]),
+        ):
+            os.write(self.handle, f"\x1b[<{code};{column + 1};{row + 1}{last}".encode())
+            self.read(0.1)
+        return self.until(seen)
+
+    def cell_of(self, text: str) -> tuple[int, int]:
+        """Column and row (from 0) of a text on the screen."""
+        row, line = next((n, line) for n, line in enumerate(self.screen.display) if text in line)
+        return line.index(text), row
+
     def hang_up(self) -> int:
         """Drop the line; the exit code."""
         self.program.send_signal(signal.SIGHUP)

@@ -12,9 +12,11 @@ from lineplanner.racking import (
     added,
     again,
     faced,
+    field_between,
     filled,
     moved,
     places_of,
+    put,
     reracked,
     sided,
     swapped,
@@ -180,3 +182,22 @@ def test_another_rack_takes_the_same_tips_or_its_own_in_order() -> None:
     assert told.value.facts == {"rack": "small", "count": 2, "parts": 3}
     with pytest.raises(InputError, match=r"racking\.hangs_otherwise"):
         reracked(here, TIPS, FREE, "frame")
+
+
+def test_a_part_let_go_of_takes_the_nearest_free_tips() -> None:
+    here = load(Hang(part="lug", tips=("A1", "B2")))
+    assert tips(put(here, TIPS, [(0, 0)], (0.19, 0.39)).load) == [("B1-B2",)]  # B2 is taken
+    assert tips(put(here, TIPS, [(0, 0)], (0.39, 0.7)).load) == [("C4", "B2")]
+    assert put(here, TIPS, [(0, 0)], (0.0, 0.0)).load == here
+    both = load(Hang(part="lug", tips=("A1-A2",)))
+    assert tips(put(both, TIPS, [(0, 0), (0, 1)], (0.3, 0.4)).load) == [("B3-B4",)]
+    with pytest.raises(InputError, match=r"racking\.not_all_there"):
+        put(both, TIPS, [(0, 0), (0, 1)], (0.4, 0.4))
+    free = load(Hang(part="bar", at=((0.1, 0.2),)))
+    assert put(free, FREE, [(0, 0)], (0.314, 0.451)).load.hangs[0].at == ((0.31, 0.45),)
+
+
+def test_a_field_is_named_by_its_corners() -> None:
+    assert field_between(TIPS, (0.35, 0.65), (0.15, 0.35)) == "B2-C3"
+    assert field_between(TIPS, (0.0, 0.0), (1.0, 1.0)) == "A1-C4"
+    assert field_between(TIPS, (0.0, 0.0), (0.05, 0.05)) == ""

@@ -44,7 +44,7 @@ def frame(part: Part, width: float, height: float, *hangs: Hang, grid: float = 0
     rack = replace(
         CASE.rack, hanging="free", tips=(), members=(), width=width, height=LEVEL + height, grid=grid
     )
-    hangs = hangs or (Hang(part="part", at=((0.0, 0.0),)),)  # above the solution, out of the way
+    hangs = hangs or (Hang(part="part", at=((-5.0, 0.0),)),)  # far off, out of the way
     load = replace(CASE.load, hangs=hangs)
     return replace(CASE, rack=rack, load=load, parts={"part": part})
 

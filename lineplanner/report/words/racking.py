@@ -11,7 +11,7 @@ MESSAGES = {
     "racking.last_of_entry": "one part is left here: take the whole entry out in the records",
     "racking.no_tip": "no free tip is left on rack {rack}",
     "racking.no_tip_there": "no free tip {direction} of here on rack {rack}",
-    "racking.not_all_there": "the {count} parts in hand do not all find a free tip one step {direction}",
+    "racking.not_all_there": "the {count} parts in hand do not all find a free tip that way",
     "racking.no_side": "the tips are taken on their other side, or do not reach there, on rack {rack}",
     "racking.no_tips": "rack {rack} has no tips here: its parts hang at free positions",
     "racking.field_full": "no tip of this field and pattern is free",

@@ -18,9 +18,11 @@ from lineplanner.racking import (
     again,
     aligned,
     faced,
+    field_between,
     filled,
     moved,
     places_of,
+    put,
     reracked,
     sided,
     spaced,
@@ -35,7 +37,7 @@ from lineplanner.tui.widgets.rack_view import RackView
 if TYPE_CHECKING:
     from lineplanner.advice import More
     from lineplanner.inputs.load import Load
-    from lineplanner.inputs.rack import Rack
+    from lineplanner.inputs.rack import Rack, Spot
     from lineplanner.tui.widgets.hand import Hand
 
 RACK = "rack"
@@ -118,6 +120,8 @@ class HangingScreen(PlannerScreen):
         view = self.rack_view
         if view is not None:
             view.canvas.carry = self._carry if on else None
+            view.canvas.drop = self._drop if on else None
+            view.canvas.field = self._draw_field if on else None
             view.canvas.focus()
             view.hand.typed = ""
             if not on:
@@ -161,6 +165,18 @@ class HangingScreen(PlannerScreen):
     def _carry(self, direction: Direction, steps: int) -> None:
         keys, steps = self.hand.keys, steps * self.hand.times()
         self.move(lambda load, rack: moved(load, rack, keys, direction, steps), f"moved {direction}")
+
+    def _drop(self, spot: Spot) -> None:
+        """The mouse let go of a part: on the free tip nearest to there."""
+        keys = self.hand.keys
+        self.move(lambda load, rack: put(load, rack, keys, spot), "moved by hand")
+
+    def _draw_field(self, one: Spot, other: Spot) -> None:
+        """The mouse drew a field over tips: filled with the part in hand."""
+        field = field_between(self.session.case.rack, one, other)
+        key = next(iter(self.hand.keys), None)
+        if field and key is not None:
+            self.move(lambda load, rack: filled(load, rack, key, PATTERNS[0], field), f"{field} filled")
 
     def action_again(self) -> None:
         """What is in hand once more, or so often as was typed."""

@@ -1,6 +1,7 @@
 """The rack picture: parts to scale, one of them selected."""
 
 from collections.abc import Callable, Iterable
+from dataclasses import dataclass, replace
 from typing import ClassVar
 
 import numpy as np
@@ -18,7 +19,18 @@ from lineplanner.tui.widgets.raster import Codes, Indices, View, text_of
 
 _CLASSES = [f"rack-canvas--{ink.name.lower().replace('_', '-')}" for ink in Ink]  # in the order of inks
 
+Point = tuple[float, float]
 Pick = Callable[[int | None], object]
+
+
+@dataclass(slots=True)
+class _Drag:
+    """What the mouse holds: a part or nothing, where it took it, and the picture from before."""
+
+    owner: int | None
+    start: Point
+    scene: Scene
+    moved: bool = False
 
 
 class RackCanvas(Widget, can_focus=True):
@@ -82,6 +94,10 @@ class RackCanvas(Widget, can_focus=True):
         self.carry: Callable[[Direction, int], object] | None = (
             None  # arrows go there while parts are carried
         )
+        # While parts are carried: where the mouse lets go of them, and the corners of a field it draws.
+        self.drop: Callable[[Point], object] | None = None
+        self.field: Callable[[Point, Point], object] | None = None
+        self._drag: _Drag | None = None
         self._view: View | None = None  # None: fitted
         self._cells: Cells | None = None
         self._codes: Codes = np.empty((0, 0), dtype=np.uint32)
@@ -186,11 +202,57 @@ class RackCanvas(Widget, can_focus=True):
 
     def on_mouse_down(self, event: events.MouseDown) -> None:
         """Pick what is under the pointer; an empty place changes nothing."""
-        left, top = self.gutter.left, self.gutter.top
-        found = self.owner_at(event.pointer_x - left, event.pointer_y - top)
+        found = self.owner_at(*self._cell(event))
         if found is not None:
             event.stop()
             self.pick(found)
+        if self.carry is not None and self.scene is not None and self._built() is not None:
+            event.stop()
+            self._drag = _Drag(found, self._place(event), self.scene)
+            self.capture_mouse()
+
+    def on_mouse_move(self, event: events.MouseMove) -> None:
+        """A part that is dragged is seen where it is."""
+        if self._drag is None or self._drag.owner is None:
+            return
+        event.stop()
+        self._drag.moved = True
+        across, up = (to - at for to, at in zip(self._place(event), self._drag.start, strict=True))
+        seen = replace(self._drag.scene.moved(self._drag.owner, across, up), extent=self._drag.scene.extent)
+        self.show(seen, self.selected, self.marked)
+
+    def on_mouse_up(self, event: events.MouseUp) -> None:
+        """Let go of a part where the mouse is, or of the corner of a field."""
+        drag = self._let_go()
+        if drag is None:
+            return
+        event.stop()
+        (x, y), (start_x, start_y) = self._place(event), drag.start
+        if drag.owner is None:
+            if self.field is not None and (x, y) != drag.start:
+                self.field((start_x, -start_y), (x, -y))
+        elif drag.moved and self.drop is not None:
+            at = drag.scene.parts[drag.owner].at
+            self.drop((at[0] + x - start_x, -(at[1] + y - start_y)))
+
+    def on_mouse_capture_lost(self) -> None:
+        self._let_go()
+
+    def _let_go(self) -> "_Drag | None":
+        """End a drag: the part is drawn again where it hangs."""
+        drag, self._drag = self._drag, None
+        if drag is not None:
+            self.release_mouse()
+            if drag.moved:
+                self.show(drag.scene, self.selected, self.marked)
+        return drag
+
+    def _cell(self, event: events.MouseEvent) -> tuple[float, float]:
+        return event.pointer_x - self.gutter.left, event.pointer_y - self.gutter.top
+
+    def _place(self, event: events.MouseEvent) -> "Point":
+        """The place of the picture under the pointer."""
+        return self._seen().place(*self._cell(event))
 
     def on_resize(self) -> None:
         self._forget()
