@@ -28,7 +28,7 @@ def begin(terminal: Terminal) -> None:
     terminal.type("spline-2", lambda text: "> spline-24" in text)
     terminal.press("enter", "First part  find:")
     terminal.type("va", lambda text: "> valve-block" in text)
-    terminal.press("enter", "part 1 of 1 ")
+    terminal.press("enter", lambda text: "part 1 of 1 " in text and "HANGING" in text)
 
 
 @pytest.mark.parametrize("size", SIZES, ids=lambda size: f"{size[0]}x{size[1]}")
