@@ -16,6 +16,7 @@ from lineplanner.inputs.hanging import spots_of, tip_places
 from lineplanner.inputs.load import Hang
 from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.part import Part
+from lineplanner.inputs.rack import Rack
 from lineplanner.quantities import Angle, Length
 
 Array = NDArray[np.float64]
@@ -64,11 +65,30 @@ class Gaps:
     near: tuple[Pair, ...] = ()
 
 
+class _Kept(NamedTuple):
+    """Gaps with the records that they were measured on, besides the entries of the load."""
+
+    rack: Rack
+    parts: tuple[Part, ...]
+    gaps: Gaps
+
+
+_GAPS: Memo[tuple[Hang, ...], _Kept] = Memo(256)
+
+
 def gaps_of(case: Case, wanted: Length = 0.0) -> Gaps:
     """The gaps of a load; wanted is the least gap in m that the recipe asks for.
 
     A part is taken as its outer outline: what hangs inside the opening of another counts as overlapping.
     """
+    hangs = case.load.hangs
+    parts = tuple(case.parts[hang.part] for hang in hangs)
+    kept = _GAPS.get(hangs, wanted, lambda: _Kept(case.rack, parts, _measured(case, wanted)))
+    same = kept.rack is case.rack and all(one is other for one, other in zip(kept.parts, parts, strict=True))
+    return kept.gaps if same else _measured(case, wanted)
+
+
+def _measured(case: Case, wanted: Length) -> Gaps:
     kinds, sides = _sides(case)
     least: tuple[Length, Pair] | None = None
     overlapping: list[Pair] = []
@@ -144,9 +164,13 @@ def _gaps(side: _Side, kinds: Sequence[Kind], one: Indices, other: Indices) -> A
     """The gap of each pair; neighbours of one kind at one offset are measured once."""
     steps = np.round((side.points[other] - side.points[one]) * 10**_DIGITS).astype(np.int64)
     alike = np.column_stack((side.kinds[one], side.kinds[other], steps))
-    unlike, whose = np.unique(alike, axis=0, return_inverse=True)
-    found = [_gap(kinds[i], kinds[j], across, up) for i, j, across, up in unlike.tolist()]
-    return np.array(found)[whose.ravel()]
+    order = np.lexsort(alike.T)
+    first = np.ones(len(order), dtype=bool)
+    first[1:] = (np.diff(alike[order], axis=0) != 0).any(axis=1)
+    found = [_gap(kinds[i], kinds[j], across, up) for i, j, across, up in alike[order[first]].tolist()]
+    gaps = np.empty(len(order))
+    gaps[order] = np.array(found)[np.cumsum(first) - 1]
+    return gaps
 
 
 def kind_of(case: Case, hang: Hang) -> Kind:

@@ -6,8 +6,11 @@ from dataclasses import dataclass, replace
 from lineplanner.errors import InputError
 from lineplanner.inputs.hanging import tip_names
 from lineplanner.inputs.load import Hang, Load
+from lineplanner.inputs.memo import Memo
 from lineplanner.inputs.rack import Spot
 from lineplanner.racking.tips import runs_of
+
+_HOWS: Memo[Hang, Hang] = Memo(1024)
 
 Key = tuple[int, int]
 """A place of a load: the number of its entry, and which place of that entry it is; both from 0."""
@@ -58,7 +61,7 @@ def changed_places(before: Load, after: Load) -> tuple[Key, ...]:
 
 def how_of(hang: Hang) -> Hang:
     """An entry without its places: how its parts hang."""
-    return replace(hang, tips=(), at=(), count=None)
+    return _HOWS.get(hang, None, lambda: replace(hang, tips=(), at=(), count=None))
 
 
 def in_hand(places: dict[Key, Place], keys: Iterable[Key]) -> list[Key]:
@@ -109,7 +112,7 @@ def _by_entry(load: Load, places: Sequence[Place]) -> list[tuple[Hang, list[Plac
 
 def _belongs(load: Load, entry: int, lists: list[tuple[Hang, list[Place]]], place: Place) -> bool:
     """Whether an entry holds parts that hang so: alike, and on tips or at free positions as they do."""
-    if lists[entry][0] != place.how:
+    if lists[entry][0] is not place.how and lists[entry][0] != place.how:
         return False
     if entry < len(load.hangs):
         hang = load.hangs[entry]

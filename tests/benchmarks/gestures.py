@@ -8,7 +8,7 @@ import re
 import sys
 import tempfile
 import tomllib
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Iterator, Sequence
 from pathlib import Path
 from typing import Any
 
@@ -22,10 +22,11 @@ SIZES = {"80x24": (80, 24), "160x50": (160, 50)}
 TIMES = 40
 # Seconds from key to last byte, 95 of 100.
 TARGETS = {
-    "80x24": {"selection": 15e-3, "count": 25e-3, "undo and redo": 25e-3, "level": 25e-3},
-    "160x50": {"selection": 25e-3, "count": 40e-3, "undo and redo": 40e-3, "level": 40e-3},
+    "80x24": {"selection": 15e-3, "carry": 15e-3, "count": 25e-3, "undo and redo": 25e-3, "level": 25e-3},
+    "160x50": {"selection": 25e-3, "carry": 25e-3, "count": 40e-3, "undo and redo": 40e-3, "level": 40e-3},
 }
 _LOAD = "a-big-one"
+_TO_AND_FRO = ("\x1b[C", "\x1b[D")  # the first part of a row to its spare tip at the other end, and back
 
 Gestures = Callable[[Screen], Iterator[Repaint]]
 
@@ -116,13 +117,16 @@ def _measured(site: Path, home: Path, size: tuple[int, int]) -> dict[str, list[R
             "count": list(_with_setpoints(_pressed(screen, "-+"))),
             "undo and redo": list(_with_setpoints(_pressed(screen, "zy"))),
         }
+        screen.type("h")
+        found["carry"] = list(_pressed(screen, _TO_AND_FRO))
+        screen.type("h")
         found["level"] = list(_with_setpoints(_levels(screen)))
     finally:
         screen.close()
     return found
 
 
-def _pressed(screen: Screen, keys: str) -> Iterator[Repaint]:
+def _pressed(screen: Screen, keys: Sequence[str]) -> Iterator[Repaint]:
     """Keys in turns; the first two of them are not counted."""
     for turn in range(TIMES + 2):
         one = screen.repaint(keys[turn % len(keys)])
