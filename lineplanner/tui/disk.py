@@ -6,7 +6,7 @@ from dataclasses import replace
 from pathlib import Path as DiskPath
 
 from lineplanner.files.content import digest_of
-from lineplanner.files.document import Stamp
+from lineplanner.files.document import Stamp, failed
 from lineplanner.files.library import Library
 from lineplanner.files.problems import FileChangedError, FileProblem, FilesError
 from lineplanner.files.reading import Entry
@@ -51,7 +51,7 @@ class Disk:
         ]
         if changed:
             raise FileChangedError(changed)
-        texts = {ref: self._text(ref, entry) for ref, entry in entries.items()}
+        texts = {ref: self.text(ref, entry) for ref, entry in entries.items()}
         for ref, text in texts.items():
             known = self.entry(ref).document
             stamp = save(known.path, text, known.stamp)
@@ -61,7 +61,7 @@ class Disk:
     def save_new(self, stem: str, entry: Entry) -> DiskPath:
         """Write a load to a file of its own. Raises FilesError for a name that is none or is taken."""
         self._check_new("load", stem)
-        text = self._text(("load", entry.document.path.stem), entry)
+        text = self.text(("load", entry.document.path.stem), entry)
         self._make_writable()
         path = self.library.folder_of("load") / f"{stem}.toml"
         stamp = save(path, text, None)
@@ -87,7 +87,21 @@ class Disk:
     def _first(self, ref: Ref) -> Entry:
         return EditedLibrary(self.reading, {}).entry(*ref)
 
-    def _text(self, ref: Ref, entry: Entry) -> str:
+    def hide(self, ref: Ref) -> DiskPath:
+        """Give a file a hidden name, so that it is no file of the site any more. Raises FilesError."""
+        self._make_writable()
+        path = self.entry(ref).document.path
+        number = next(n for n in range(1, 10_000) if not _hidden(path, n).exists())
+        try:
+            path.rename(_hidden(path, number))
+        except OSError as error:
+            raise failed(path, "file.not_written", why=error.strerror or type(error).__name__) from error
+        self._saved.pop(ref, None)
+        self.reading.entries.pop(ref, None)
+        return _hidden(path, number)
+
+    def text(self, ref: Ref, entry: Entry) -> str:
+        """The text of a file with the values of an entry."""
         from lineplanner.files.amending import read_back  # at the first save: the TOML editor takes its time
 
         return read_back(self._first(ref).document, entry)
@@ -97,6 +111,10 @@ class Disk:
         own = self.library.for_writing()
         if own is not self.library:
             self.reading.moved_to(own)
+
+
+def _hidden(path: DiskPath, number: int) -> DiskPath:
+    return path.with_name(f".{path.stem}.{number}.removed")
 
 
 def _is(entry: Entry) -> bool:

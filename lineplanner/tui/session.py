@@ -130,6 +130,20 @@ class Session(Workbench):
             path.unlink()
             raise
 
+    # --- files of the site -------------------------------------------------------------------------------
+
+    def create(self, kind: str, stem: str, text: str) -> DiskPath:
+        """A new file. Raises FilesError for a name that is none or is taken, or a text that does not read."""
+        return self._disk.create(kind, stem, text)
+
+    def text_to_file(self, ref: Ref) -> str:
+        """The text of a file as edited, comments and order as they are."""
+        return self._disk.text(ref, self.library.entry(*ref))
+
+    def hide(self, ref: Ref) -> DiskPath:
+        """Take a file out of the site, kept under a hidden name. Raises FilesError where that is not possible."""
+        return self._disk.hide(ref)
+
     # --- saving ------------------------------------------------------------------------------------------
 
     def save(self) -> list[DiskPath]:

@@ -61,7 +61,7 @@ def test_no_sentence_is_left_over() -> None:
 
 
 def _asked_for_by_commands() -> set[str]:
-    used, _ = keys.all_keys(PACKAGE, ("report", "cli"))
+    used, _ = keys.all_keys(PACKAGE, ("report", "cli", "tui"))
     return set(used)
 
 

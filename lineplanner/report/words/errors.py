@@ -25,5 +25,9 @@ MESSAGES = {
     "check.nothing": "no file is named. Name one or more files, or `--schema KIND`",
     "start.nowhere": "no folder is named. Name an empty or a new one: `lineplanner start DIR`",
     "approve.nobody": "nobody is named. Say who approves it: `--by NAME`",
+    # files of the site
+    "stock.used": "{file} is used by {users}. Change that first",
+    "stock.open": "{file} is needed by the load that is open, {load}. Open another load first",
+    "stock.changed": "{file} holds changes that are not saved. Save or undo them first",
     "site.no_loads": "this site holds no load. Write one, or begin with the demo shop: `lineplanner start DIR`",
 }

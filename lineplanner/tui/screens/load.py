@@ -49,6 +49,7 @@ class LoadScreen(HangingScreen):
         *KEYS[1:],
         Binding("w", "swap", "swap part"),
         Binding("e", "edit", "edit"),
+        Binding("L", "library", "library", show=False),
         Binding("z", "undo", "undo"),
         Binding("s", "save", "save"),
         Binding("c", "view('cautions')", "cautions"),
@@ -228,6 +229,11 @@ class LoadScreen(HangingScreen):
                 lambda load: exchanged(load, place, part),
                 f"{part} in place of {self.session.case.load.hangs[place].part}",
             )
+
+    def action_library(self) -> None:
+        from lineplanner.tui.screens.library import LibraryScreen
+
+        self.app.push_screen(LibraryScreen(self.session))
 
     def action_edit(self) -> None:
         self.app.push_screen(RecordList(self.session))
