@@ -26,6 +26,7 @@ from lineplanner.report.style import Style
 CAUTION = "caution:"
 _GAP = "   "  # between the items of a setpoint line
 _ON = " on "
+_LEAST_NAME = 12  # letters of a recipe's name before its status is said shorter
 
 
 __all__ = ["Head", "Line", "Piece", "Row", "Table", "head_of", "title_text", "why_lines", "why_title"]
@@ -35,8 +36,12 @@ def title_text(plan: Plan, width: int = WIDTH) -> str:
     """The load, its recipe with revision, status and deviations, its tank; the recipe's name gives way if need be."""
     name = plan.filed.name
     before = f"{plan.case.name}{_GAP}"
-    after = f"{recipe_said(plan).removeprefix(name)}{_GAP}tank {plan.case.tank.name}"
+    said = recipe_said(plan).removeprefix(name)
+    after = f"{said}{_GAP}tank {plan.case.tank.name}"
     room = width - len(before) - len(after)
+    if room < _LEAST_NAME:  # the status must not be cut: why it is a draft is in the records
+        after = after.replace("DRAFT RECIPE (changed since it was approved)", "DRAFT, changed")
+        room = width - len(before) - len(after)
     return f"{before}{name if len(name) <= room else shortened(name, room)}{after}"
 
 

@@ -37,6 +37,10 @@ class Disk:
         """Those of some files that somebody else changed or took away."""
         return (ref for ref in refs if not _is(self.entry(ref)))
 
+    def outdated(self) -> list[Ref]:
+        """Those of all files read that somebody else changed or took away."""
+        return list(self.changed(self.reading.entries))
+
     def forget(self, keep: Container[Ref]) -> None:
         """Read everything but some files again when it is asked for."""
         self._saved = {ref: entry for ref, entry in self._saved.items() if ref in keep}

@@ -168,7 +168,7 @@ class Session(Workbench):
     def revert(self) -> None:
         """Give up all that is not saved. Of files that were changed on disk the new ones count; then undo ends."""
         name = self.name
-        if self.changed_on_disk:
+        if self.changed_on_disk or self._disk.outdated():
             self._start_over(keep=())
             if name:
                 self.open(name)

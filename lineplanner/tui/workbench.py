@@ -134,7 +134,9 @@ class Workbench:
         if found is None:
             return None
         undone, before = found
-        self._take(before.drafts, undone.came_from)
+        self._take(
+            before.drafts, undone.came_from or self.name
+        )  # recovered work was taken up where none was open
         self._history.at -= 1
         self._edited()
         return undone.label
@@ -148,6 +150,18 @@ class Workbench:
         self._history.at += 1
         self._edited()
         return state.label
+
+    @property
+    def undone_elsewhere(self) -> str:
+        """The load at which the last edit was made, where that is not the open one; taking it back leads there."""
+        found = self._history.undone
+        return found[0].came_from if found and found[0].came_from not in ("", self.name) else ""
+
+    @property
+    def redone_elsewhere(self) -> str:
+        """The load at which the edit was made that is to be made again, where that is not the open one."""
+        state = self._history.redone
+        return state.load if state and state.load not in ("", self.name) else ""
 
     @property
     def can_undo(self) -> bool:

@@ -189,3 +189,19 @@ def test_how_many_more_is_told_and_hung_in_one_step(shop: Path) -> None:
         await pilot.press("escape")
 
     drive(steps, shop)
+
+
+def test_the_picture_is_looked_at_nearer_and_moved_by_keys(shop: Path) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*"valve", "enter")
+        whole = text_on(pilot)
+        assert "500 mm" in whole  # the bar of the scale
+        await pilot.press("greater_than_sign", "greater_than_sign", "ctrl+down")
+        assert text_on(pilot) != whole
+        assert not load_screen(pilot).session.dirty
+        await pilot.press("g")
+        assert text_on(pilot) == whole
+        await pilot.press("u")
+        assert "20 in" in text_on(pilot)
+
+    drive(steps, shop)

@@ -18,6 +18,7 @@ from lineplanner.report.rows import Row, Table
 from lineplanner.tui.widgets.table import TableView
 from lineplanner.tui.widgets.text import tidy
 
+_AROUND = 5  # rows that border, question and blank lines take
 Answer = tuple[str, str, str]
 """A key, what it does in words, and the answer that it gives."""
 
@@ -46,7 +47,8 @@ class AskScreen(ModalScreen[str]):
         if self.lines:
             lines = self.query_one("#lines", TableView)
             lines.show(Table((), frozenset(), tuple(Row((line,)) for line in self.lines)))
-            lines.styles.height = min(len(self.lines), 12)
+            room = self.size.height - len(self.answers) - _AROUND
+            lines.styles.height = max(1, min(len(self.lines), room))
         answers = self.query_one("#answers", TableView)
         answers.show(Table((), frozenset(), tuple(Row((key, text)) for key, text, _ in self.answers)))
         answers.styles.height = len(self.answers)

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterable
 from typing import TYPE_CHECKING, Any, ClassVar
 
+from textual.actions import parse
 from textual.app import App
 from textual.binding import Binding, BindingType
 from textual.dom import DOMNode
@@ -79,24 +80,24 @@ class PlannerScreen(Screen[None]):
         width, height = self.size
         if width < LEAST[0] or height < LEAST[1]:
             self.hints.say(TOO_SMALL.format(width=width, height=height))
+        elif self.hints.said.startswith(TOO_SMALL[:14]):
+            self.hints.say("")
 
     # --- all commands ------------------------------------------------------------------------------------
 
     def commands(self) -> list[tuple[str, Any]]:
         """Every command of ours in force here, as title and what runs it: of the screen first, then of its widgets."""
-        found: dict[str, tuple[int, str, Any]] = {}
-        for key, active in self.active_bindings.items():
-            binding, node = active.binding, active.node
-            if (
-                active.enabled
-                and binding.description
-                and _is_ours(node, binding)
-                and binding.action != "commands"
-            ):
-                order = 0 if node is self else 1 if isinstance(node, App) else 2
-                title = f"{binding.description}   {key_said(key)}"
-                found.setdefault(binding.action, (order, title, (binding.action, node)))
-        return [(title, run) for _, title, run in sorted(found.values(), key=lambda one: one[0])]
+        focused = [] if self.focused is None else list(self.focused.ancestors_with_self)
+        widgets = [node for node in focused if node is not self and not isinstance(node, App)]
+        found: dict[str, tuple[str, Any]] = {}
+        for node in (self, self.app, *widgets):
+            for binding in _own_bindings(node):
+                name, parameters = _parsed(binding.action)
+                if binding.description and name != "commands" and node.check_action(name, parameters):
+                    keys = ", ".join(key_said(key.strip()) for key in binding.key.split(","))
+                    title = f"{binding.description}   {keys}"
+                    found.setdefault(binding.description, (title, (binding.action, node)))
+        return list(found.values())
 
     def action_commands(self) -> None:
         picker = PickScreen("Command", self.commands(), ascii_only=self.session.style.ascii)
@@ -108,8 +109,13 @@ class PlannerScreen(Screen[None]):
             self.call_later(self.app.run_action, action, node)
 
 
-def _is_ours(node: DOMNode, binding: Binding) -> bool:
-    """Whether one of our classes declares a binding; Textual's own on fields and boxes are no commands."""
+def _own_bindings(node: DOMNode) -> list[Binding]:
+    """The bindings that our classes declare; Textual's own on fields and boxes are no commands."""
     ours = [cls for cls in type(node).__mro__ if cls.__module__.startswith("lineplanner.")]
-    declared = [one for cls in ours for one in vars(cls).get("BINDINGS", ())]
-    return any(isinstance(one, Binding) and one.action == binding.action for one in declared)
+    return [one for cls in ours for one in vars(cls).get("BINDINGS", ()) if isinstance(one, Binding)]
+
+
+def _parsed(action: str) -> tuple[str, tuple[object, ...]]:
+    """The name of an action without its target, and its parameters."""
+    _, name, parameters = parse(action)
+    return name, parameters

@@ -298,12 +298,15 @@ class RecordForm(PlannerScreen):
             self.show()
             self.say(f"dropped: {dropped}")
         else:
-            self._back("undone", "nothing to undo", self.session.undo)
+            self._back("undone", "nothing to undo", self.session.undo, self.session.undone_elsewhere)
 
     def action_redo(self) -> None:
-        self._back("done again", "nothing to do again", self.session.redo)
+        self._back("done again", "nothing to do again", self.session.redo, self.session.redone_elsewhere)
 
-    def _back(self, word: str, nothing: str, step: Callable[[], str | None]) -> None:
+    def _back(self, word: str, nothing: str, step: Callable[[], str | None], elsewhere: str) -> None:
+        if elsewhere:
+            self.say(f"that change was made at {elsewhere}: open that load for it")
+            return
         label = step()
         self.sheet.refresh()
         self.show()

@@ -22,7 +22,7 @@ from lineplanner.tui.edited import Ref
 from lineplanner.tui.screens.ask import AskScreen, PickScreen, PromptScreen
 from lineplanner.tui.screens.hanging import KEYS, NOTE, RACK, HangingScreen
 from lineplanner.tui.screens.records import RecordList
-from lineplanner.tui.screens.why import why_screen
+from lineplanner.tui.screens.why import TextScreen, why_screen
 from lineplanner.tui.session import Session
 from lineplanner.tui.widgets.head import HeadLines
 from lineplanner.tui.widgets.rack_view import RackView
@@ -127,7 +127,7 @@ class LoadScreen(HangingScreen):
         self.call_after_refresh(self.retell)
 
     def on_screen_resume(self) -> None:
-        if self.told is not None and self.told is not self.session.plan:
+        if self.told is not None and self.session.name and self.told is not self.session.plan:
             self.retell(self.session.moved)
 
     # --- views -------------------------------------------------------------------------------------------
@@ -239,10 +239,18 @@ class LoadScreen(HangingScreen):
         self.app.push_screen(RecordList(self.session))
 
     def action_undo(self) -> None:
-        self._back(self.session.undo, "undone")
+        if self._at_home(self.session.undone_elsewhere, "taken back"):
+            self._back(self.session.undo, "undone")
 
     def action_redo(self) -> None:
-        self._back(self.session.redo, "done again")
+        if self._at_home(self.session.redone_elsewhere, "made again"):
+            self._back(self.session.redo, "done again")
+
+    def _at_home(self, elsewhere: str, word: str) -> bool:
+        """Whether a step stays at this load; a step elsewhere would change what nobody looks at."""
+        if elsewhere:
+            self.say(f"the last change was made at {elsewhere}: open that load, then it can be {word}")
+        return not elsewhere
 
     def _back(self, step: Callable[[], str | None], word: str) -> None:
         """A step through what was done; in hand is then what it put back."""
@@ -305,9 +313,21 @@ class LoadScreen(HangingScreen):
         self.ask("Take back what is not saved?", answers, self._revert)
 
     def _revert(self, answer: str | None) -> None:
-        if answer == "revert":
-            self.session.revert()
+        if answer != "revert":
+            return
+        if self._given_up():
             self._step("to what is saved", "back")
+
+    def _given_up(self) -> bool:
+        """Give up what is not saved. False where what is on disk cannot be planned any more: told, then left."""
+        try:
+            self.session.revert()
+        except PlannerError as error:
+            said = error_text(error, self.session.style).splitlines()
+            text = TextScreen("On disk by now:", said, ascii_only=self.session.style.ascii)
+            self.app.push_screen(text, lambda _: self.dismiss(None))
+            return False
+        return True
 
     def ask(
         self, question: str, answers: tuple[tuple[str, str, str], ...], then: Callable[[str | None], None]
@@ -328,7 +348,5 @@ class LoadScreen(HangingScreen):
         self.ask("Not saved:", answers, self._leave)
 
     def _leave(self, answer: str | None) -> None:
-        if answer == "discard":
-            self.session.revert()
-        if answer == "discard" or (answer == "save" and self._saved()):
+        if (answer == "discard" and self._given_up()) or (answer == "save" and self._saved()):
             self.dismiss(None)

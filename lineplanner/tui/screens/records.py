@@ -71,11 +71,19 @@ class RecordList(PlannerScreen):
         self.app.push_screen(RecordForm(self.session, self.refs[self.query_one(TableView).row]))
 
     def action_undo(self) -> None:
+        elsewhere = self.session.undone_elsewhere
+        if elsewhere:
+            self.say(f"the last change was made at {elsewhere}: open that load to take it back")
+            return
         label = self.session.undo()
         self.retell()
         self.say(f"undone: {label}" if label else "nothing to undo")
 
     def action_redo(self) -> None:
+        elsewhere = self.session.redone_elsewhere
+        if elsewhere:
+            self.say(f"the change was made at {elsewhere}: open that load to make it again")
+            return
         label = self.session.redo()
         self.retell()
         self.say(f"done again: {label}" if label else "nothing to do again")

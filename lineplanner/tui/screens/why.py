@@ -24,6 +24,7 @@ if TYPE_CHECKING:
     from lineplanner.plan import Plan
 
 _SCROLL = frozenset({"up", "down", "left", "right", "pageup", "pagedown", "home", "end", "space"})
+_AROUND = 3  # rows that border and foot take
 BOX = 80  # columns of the box at most
 FOOT = "arrows scroll, any other key closes"
 
@@ -52,7 +53,7 @@ class TextScreen(ModalScreen[None]):
         lines = [part for line in self.lines for part in _within(line, room)]
         text = self.query_one(TableView)
         text.show(reading_table(lines))
-        text.styles.height = max(1, len(lines))
+        text.styles.height = max(1, min(len(lines), self.size.height - _AROUND - bool(self.titled)))
 
     def on_key(self, event: events.Key) -> None:
         if event.key not in _SCROLL:

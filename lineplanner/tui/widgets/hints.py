@@ -16,6 +16,8 @@ _KEYS = {
     "plus": "+",
     "minus": "-",
     "full_stop": ".",
+    "greater_than_sign": ">",
+    "less_than_sign": "<",
     "left_square_bracket": "[",
     "right_square_bracket": "]",
 }

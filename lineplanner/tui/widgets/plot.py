@@ -9,6 +9,7 @@ from rich.segment import Segment
 from rich.style import Style as RichStyle
 from textual import events
 from textual.binding import Binding, BindingType
+from textual.geometry import Size
 from textual.strip import Strip
 
 from lineplanner.report.plot import Plot, Series
@@ -79,6 +80,7 @@ class ProgramPlot(KeptLines, can_focus=True):
         self.share = 0.0
         self._reader: Read = lambda _: ""
         self._lines: list[Strip] = []
+        self._made_for = Size(0, 0)
 
     def show(self, plot: Plot | None, reader: Read, share: float | None = None) -> None:
         """Another plot and who reads it; the cursor stays where it is unless told."""
@@ -125,6 +127,8 @@ class ProgramPlot(KeptLines, can_focus=True):
 
     def draw_line(self, y: int) -> Strip:
         """One line of the plot; all are made at once."""
+        if self._made_for != self.size:  # drawn before the event that tells of the new size
+            self._lines, self._made_for = [], self.size
         if not self._lines and self.size.area:
             self._lines = self._made()
         return self._lines[y] if y < len(self._lines) else Strip.blank(self.size.width, self.look())

@@ -15,7 +15,7 @@ from textual.widget import Widget
 
 from lineplanner.report.picture import Direction, Scene
 from lineplanner.tui.widgets.rack_cells import BLANK, Cells, Ink
-from lineplanner.tui.widgets.raster import Codes, Indices, View, text_of
+from lineplanner.tui.widgets.raster import ACROSS, Codes, Indices, View, text_of
 
 _CLASSES = [f"rack-canvas--{ink.name.lower().replace('_', '-')}" for ink in Ink]  # in the order of inks
 
@@ -73,6 +73,13 @@ class RackCanvas(Widget, can_focus=True):
             for way in ("left", "right", "up", "down")
         ),
         Binding("n", "next", "next part", id="rack.next"),
+        Binding("greater_than_sign", "zoom(1.5)", "nearer", show=False, id="rack.nearer"),
+        Binding("less_than_sign", "zoom(0.6667)", "farther", show=False, id="rack.farther"),
+        Binding("g", "fit", "the whole rack", show=False, id="rack.fit"),
+        *(
+            Binding(f"ctrl+{way}", f"pan({x}, {y})", f"look {way}", show=False, id=f"rack.look-{way}")
+            for way, x, y in (("left", -8, 0), ("right", 8, 0), ("up", 0, -4), ("down", 0, 4))
+        ),
         Binding("N", "previous", "previous part", show=False, id="rack.previous"),
     ]
 
@@ -98,6 +105,8 @@ class RackCanvas(Widget, can_focus=True):
         self.drop: Callable[[Point], object] | None = None
         self.field: Callable[[Point, Point], object] | None = None
         self._drag: _Drag | None = None
+        # From the width of a cell and the most cells: a bar of the scale, and its text.
+        self.scaled: Callable[[float, int], tuple[int, str]] | None = None
         self._view: View | None = None  # None: fitted
         self._cells: Cells | None = None
         self._codes: Codes = np.empty((0, 0), dtype=np.uint32)
@@ -193,6 +202,15 @@ class RackCanvas(Widget, can_focus=True):
             self.carry(direction, steps)
         else:
             self.toward(direction)
+
+    def action_zoom(self, factor: float) -> None:
+        self.zoom(factor)
+
+    def action_fit(self) -> None:
+        self.fit()
+
+    def action_pan(self, columns: int, rows: int) -> None:
+        self.pan(columns, rows)
 
     def action_next(self) -> None:
         self.next()
@@ -302,7 +320,9 @@ class RackCanvas(Widget, can_focus=True):
     def _built(self) -> Cells | None:
         """The cells of scene and size, drawn if they are not yet."""
         if self._cells is None and self.scene is not None and self.size.area:
-            self._cells = Cells(self.scene, self._seen(), ascii_only=self.ascii_only)
+            view = self._seen()
+            bar = None if self.scaled is None else self.scaled(ACROSS / view.scale, view.columns // 5)
+            self._cells = Cells(self.scene, view, ascii_only=self.ascii_only, scale=bar)
             self._strips = [None] * self.size.height
             self._mark()
         return self._cells

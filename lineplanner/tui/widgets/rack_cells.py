@@ -53,8 +53,11 @@ class Ink(IntEnum):
 class Cells:
     """A scene in a window: codes and inks of every cell, and whose each cell is. Nothing selected in it yet."""
 
-    def __init__(self, scene: Scene, view: View, *, ascii_only: bool = False) -> None:
-        self.scene, self.view, self.ascii_only = scene, view, ascii_only
+    def __init__(
+        self, scene: Scene, view: View, *, ascii_only: bool = False, scale: tuple[int, str] | None = None
+    ) -> None:
+        """scale is a bar of so many cells and its text."""
+        self.scene, self.view, self.ascii_only, self.scale = scene, view, ascii_only, scale
         self.codes: Codes = np.full((view.rows, view.columns), BLANK, dtype=np.uint32)
         self.inks: Inks = np.zeros((view.rows, view.columns), dtype=np.uint8)
         self._order = scene.back_first
@@ -128,8 +131,9 @@ class Cells:
         if label and 0 <= start <= columns - len(label):
             yield start, row, label
         first, last = (left, right) if width >= LEAST_WIDE else (left - 1, right + 1)
-        if label and width > len(label) + _NEAR:  # beside the number rather than far off
-            first, last = start - 1, start + len(label)
+        beside = start - 1, start + len(label)
+        if label and (width > len(label) + _NEAR or first > beside[0] or last < beside[1]):
+            first, last = beside  # rather than far off the number, and never on it
         yield max(first, 0), row, signs[0]
         yield min(last, columns - 1), row, signs[1]
 
@@ -324,6 +328,16 @@ class Cells:
             for row, line in zip(range(rows - len(lines), rows), lines, strict=True):
                 if (self.codes[row, 1 : len(line) + 2] == BLANK).all():
                     self._text(1, row, line, Ink.NOTE)
+
+        if self.scale is not None:
+            self._scale(*self.scale)
+
+    def _scale(self, cells: int, said: str) -> None:
+        """The bar of the scale in the last row at the right, where nothing else is."""
+        text = f"|{'-' * max(cells - 2, 0)}| {_narrow(plain(said) if self.ascii_only else said)}"
+        row, column = self.view.rows - 1, self.view.columns - len(text) - 1
+        if row > _KEY_ROWS and column > 0 and (self.codes[row, column - 1 :] == BLANK).all():
+            self._text(column, row, text, Ink.NOTE)
 
     def _marks(self) -> set[str]:
         """The marks of the key that stand in the picture."""

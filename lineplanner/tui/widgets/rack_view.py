@@ -2,13 +2,15 @@
 
 from __future__ import annotations
 
+from functools import partial
+
 from textual.app import ComposeResult
 from textual.containers import Container, Horizontal, Vertical
 from textual.widgets import Static
 
 from lineplanner.report.picture import Hung, Scene, scene_of
 from lineplanner.report.rows import Table
-from lineplanner.report.selected import item_of, selected_lines, selected_rows
+from lineplanner.report.selected import item_of, scale_bar, selected_lines, selected_rows
 from lineplanner.report.view_tables import areas_table, checks_table
 from lineplanner.tui.session import Session
 from lineplanner.tui.widgets.hand import Hand, key_of, owners_of
@@ -83,6 +85,7 @@ class RackView(LoadView):
             if self.hung is None or self.hung.hang != self.hang:
                 self.owner = self._first()
         self._take()
+        self.canvas.scaled = partial(scale_bar, style=session.style)
         self.canvas.show(self.scene, self.owner, owners_of(self.scene, self.hand.marked))
         self._say(moved)
 
