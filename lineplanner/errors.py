@@ -16,10 +16,14 @@ class KindOfQuantity(Protocol):
 
 @dataclass(frozen=True, slots=True)
 class Quantity:
-    """A number with its kind, in SI: what a message, a finding or a figure carries."""
+    """A number with its kind, in SI: what a message, a finding or a figure carries.
+
+    at_most says that more than the number would be too much: it is never printed rounded up.
+    """
 
     value: float
     kind: KindOfQuantity
+    at_most: bool = False
 
 
 Fact = str | int | Quantity

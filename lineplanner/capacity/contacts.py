@@ -11,6 +11,7 @@ from lineplanner.findings import Finding, Level, lower, note, upper
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.tables import ProcessDefaults
 from lineplanner.load import Item, LoadAreas, conductor_named
+from lineplanner.program.panel import panel_step
 from lineplanner.program.stages import Run
 from lineplanner.quantities import COUNT, CURRENT, CURRENT_DENSITY, CurrentDensity
 from lineplanner.sources import Source, Status
@@ -44,9 +45,10 @@ def _item(
         "demand": Quantity(demand, CURRENT),
         "allowed": Quantity(limit, CURRENT),
     }
-    fitting = fitting_density(run, peak_current(run) * limit / demand) if demand > 0.0 else None
+    step = panel_step(run.rectifier) if run.rectifier is not None else 0.0
+    fitting = fitting_density(run, peak_current(run) * limit / demand, step=step) if demand > 0.0 else None
     if fitting is not None:
-        facts["density"] = Quantity(fitting, CURRENT_DENSITY)
+        facts["density"] = Quantity(fitting, CURRENT_DENSITY, at_most=True)
     finding = upper(
         "contacts",
         value=demand,

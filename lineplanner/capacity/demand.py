@@ -165,14 +165,15 @@ def stage_volts(stage: Stage) -> Voltage:
     return max(stage.from_voltage, stage.to_voltage)
 
 
-def fitting_density(run: Run, allowed: Current) -> CurrentDensity | None:
+def fitting_density(run: Run, allowed: Current, *, step: Current = 0.0) -> CurrentDensity | None:
     """Current density to set so that the peak of the program just fits.
 
-        J_fit = J_set I_allowed / I_peak
+        J_fit = J_set (I_allowed / I_peak - step / (2 I_set))
 
     Parameters
-        run: the program on its rectifier
+        run: the program on its rectifier; where its volts cut it, I_peak is what the recipe asks for
         allowed: I_allowed, of the whole load [A]
+        step: of the panel, whose setting may come out half a step higher [A]
     Returns
         J_fit; None where density is no setting, or the peak does not follow it (a reverse etch) [A/m^2]
     Valid
@@ -182,7 +183,7 @@ def fitting_density(run: Run, allowed: Current) -> CurrentDensity | None:
     Example
         >>> from types import SimpleNamespace as Record
         >>> plate = Record(stage="plate", density=150.0, to_current=1200.0, peak=1200.0)
-        >>> fitting_density(Record(stages=(plate,), panel_current=1200.0), 1000.0)
+        >>> fitting_density(Record(stages=(plate,), panel_current=1200.0, asked=()), 1000.0)
         125.0
     """
     stage = peak_stage(run)
@@ -190,7 +191,8 @@ def fitting_density(run: Run, allowed: Current) -> CurrentDensity | None:
         return None
     last = run.stages[-1]
     set_density = last.density * run.panel_current / last.to_current
-    return set_density * allowed / stage.peak
+    asked = max(stage.peak, run.panel_current, *(one.peak for one in run.asked if one.stage != "reverse"))
+    return max(set_density * (allowed / asked - step / (2.0 * run.panel_current)), 0.0)
 
 
 def firm_current(run: Run) -> bool:

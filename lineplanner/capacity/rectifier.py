@@ -19,6 +19,7 @@ from lineplanner.findings import Finding, Level, lower, note, upper
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.hanging import parts_hung
 from lineplanner.inputs.line import Rectifier
+from lineplanner.program.panel import panel_step
 from lineplanner.program.stages import Run, Stage
 from lineplanner.quantities import (
     CURRENT,
@@ -144,9 +145,10 @@ def _way(value: float, limit: float, facts: Mapping[str, Fact], name: str) -> st
 def _ways_out(run: Run, case: Case, value: Current, limit: Current) -> dict[str, Fact]:
     """The current density that fits, and how many parts to take off, where a load is over a limit."""
     facts: dict[str, Fact] = {"demand": Quantity(value, CURRENT), "allowed": Quantity(limit, CURRENT)}
-    density = fitting_density(run, limit)
+    step = panel_step(run.rectifier) if run.rectifier is not None else 0.0
+    density = fitting_density(run, limit, step=step)
     if density is not None:
-        facts["density"] = Quantity(density, CURRENT_DENSITY)
+        facts["density"] = Quantity(density, CURRENT_DENSITY, at_most=True)
     if value <= limit:
         return facts
     share = _part_share(run, case)

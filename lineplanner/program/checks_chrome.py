@@ -1,6 +1,9 @@
 """What substrate and bath say about a hard chrome run."""
 
+import re
 from collections.abc import Iterator
+from contextlib import suppress
+from datetime import date
 
 from lineplanner.bath.efficiency import at_cap, bright_window_high, bright_window_low, outside_range
 from lineplanner.errors import Fact
@@ -23,6 +26,8 @@ _PRESET = Source("substrates table", Status.PRACTICE)
 _BRIGHT = Source(
     "Modern Electroplating, chromium chapter: bright range at 40 and 45 degC, extrapolated", Status.ASSUMPTION
 )
+
+_DAY = re.compile(r"(?<!\d)\d{4}-\d{2}-\d{2}(?!\d)")
 
 
 def check_chrome(job: Job, run: Run, deposition: Deposition) -> Iterator[Finding]:
@@ -121,14 +126,23 @@ def _strong_steel(job: Job) -> Iterator[Finding]:
                 break
 
 
+def _dated(authority: str) -> bool:
+    """Whether a text names a document and its date: some letters, and a day as the calendar has it."""
+    for found in _DAY.findall(authority):
+        with suppress(ValueError):
+            date.fromisoformat(found)
+            return any(letter.isalpha() for letter in authority)
+    return False
+
+
 def _design_authority(job: Job, part: str, value: float, row: Sourced, kind: Kind) -> Finding:
     """A stop until the authority is entered, then a note that it is."""
     authority = job.recipe.owner_authority
     facts: dict[str, Fact] = {"part": part, "authority": authority}
-    if authority:
+    if _dated(authority):
         return note(
             "design-authority", "design-authority.entered", row.origin, part=part, authority=authority
         )
     level = Level.STOP if row.status.may_stop else Level.CAUTION
-    key, fix = "design-authority.missing", "design-authority.enter"
+    key, fix = f"design-authority.{'undated' if authority else 'missing'}", "design-authority.enter"
     return Finding("design-authority", level, key, row.origin, kind, value, row.value, None, fix, facts)

@@ -63,9 +63,10 @@ class Style:
         unit: str | None = None,
         step: float | None = None,
         digits: int | None = None,
+        down: bool = False,
     ) -> str:
-        """An SI value with its unit, in the digits of its kind."""
-        return _shown(self, value, kind.name, unit, step, digits)
+        """An SI value with its unit, in the digits of its kind; down: rounded to no more than it is."""
+        return _shown(self, value, kind.name, unit, step, digits, down)
 
     def marked(self, text: str) -> str:
         """A shown value with the signs of this style: `50 um` or `50 µm`."""
@@ -82,7 +83,7 @@ class Style:
             return str(fact)
         if fact.kind.name == "time":
             return self.time_said(fact.value)
-        return self.show(fact.value, fact.kind)
+        return self.show(fact.value, fact.kind, down=fact.at_most)
 
     def time_said(self, time: Time) -> str:
         """A time in a sentence: from two hours on in hours.
@@ -97,12 +98,18 @@ class Style:
 
 @lru_cache(maxsize=4096)  # one change of a load leaves most figures as they are
 def _shown(
-    style: Style, value: float, kind: str, unit: str | None, step: float | None, digits: int | None
+    style: Style,
+    value: float,
+    kind: str,
+    unit: str | None,
+    step: float | None,
+    digits: int | None,
+    down: bool,  # noqa: FBT001 - a cache knows its arguments by their place
 ) -> str:
     from lineplanner import units
     from lineplanner.quantities import KINDS
 
-    text = units.show(value, KINDS[kind], style.system, unit=unit, step=step, digits=digits)
+    text = units.show(value, KINDS[kind], style.system, unit=unit, step=step, digits=digits, down=down)
     return style.marked(text)
 
 

@@ -1,6 +1,6 @@
 """SI float -> text with the trade's unit and digits."""
 
-from decimal import ROUND_HALF_UP, Decimal
+from decimal import ROUND_FLOOR, ROUND_HALF_UP, Decimal
 from math import isfinite
 
 from lineplanner.quantities import COUNT, RATIO, Kind
@@ -37,11 +37,13 @@ def show(
     digits: int | None = None,
     unit: str | None = None,
     step: float | None = None,
+    down: bool = False,
 ) -> str:
     """An SI value as text. Without more: the trade's unit of the system and the trade's digits.
 
     digits: significant digits instead of the usual ones. unit: another unit of the kind.
     step: what the panel can be set to, in SI; the number is shown as the nearest multiple.
+    down: never more than the value is, where the nearest would be.
 
     >>> from lineplanner.quantities import CURRENT, THICKNESS
     >>> show(0.0000254, THICKNESS, "us"), show(1234.0, CURRENT, "metric", step=10.0)
@@ -49,15 +51,16 @@ def show(
     """
     unit = unit or fitting_unit(kind, system, value)
     number = _decimal(to_unit(value, kind, unit))
+    rounding = ROUND_FLOOR if down else ROUND_HALF_UP
     if step is not None:
         factor = unit_conversion(unit, kind).factor
-        text = _in_steps(number, _decimal(step / factor), keep_zeros=True)
+        text = _in_steps(number, _decimal(step / factor), rounding, keep_zeros=True)
     elif digits is not None:
-        text = _significant(number, digits, whole=False)
+        text = _significant(number, digits, rounding, whole=False)
     elif kind == COUNT:
-        text = _in_steps(number, Decimal(1), keep_zeros=False)
+        text = _in_steps(number, Decimal(1), rounding, keep_zeros=False)
     else:
-        text = _usual(number, kind, unit)
+        text = _usual(number, kind, unit, rounding)
     return _joined(text, unit)
 
 
@@ -86,25 +89,25 @@ def _joined(number: str, unit: str) -> str:
     return number if unit in ("1", "") else f"{number} {unit}"
 
 
-def _usual(number: Decimal, kind: Kind, unit: str) -> str:
+def _usual(number: Decimal, kind: Kind, unit: str, rounding: str) -> str:
     step = STEPS.get(unit)
     if step:
-        text = _in_steps(number, Decimal(step), keep_zeros=unit in TRAILING_ZEROS)
+        text = _in_steps(number, Decimal(step), rounding, keep_zeros=unit in TRAILING_ZEROS)
         # A small amount never reads as none; what is smaller yet is the noise of a computed zero.
         if Decimal(text) != 0 or abs(number) < Decimal(step) / 100:
             return text
-        return _significant(number, 1, whole=False)
-    return _significant(number, SIGNIFICANT, whole=kind not in THREE_DIGITS_ONLY)
+        return _significant(number, 1, rounding, whole=False)
+    return _significant(number, SIGNIFICANT, rounding, whole=kind not in THREE_DIGITS_ONLY)
 
 
-def _in_steps(number: Decimal, step: Decimal, *, keep_zeros: bool) -> str:
+def _in_steps(number: Decimal, step: Decimal, rounding: str, *, keep_zeros: bool) -> str:
     if abs(number) >= _LARGE:
-        return _significant(number, SIGNIFICANT, whole=False)
-    multiple = (number / step).quantize(Decimal(1), ROUND_HALF_UP) * step
+        return _significant(number, SIGNIFICANT, rounding, whole=False)
+    multiple = (number / step).quantize(Decimal(1), rounding) * step
     return _plain(multiple, keep_zeros=keep_zeros)
 
 
-def _significant(number: Decimal, digits: int, *, whole: bool) -> str:
+def _significant(number: Decimal, digits: int, rounding: str, *, whole: bool) -> str:
     if number == 0:
         return "0"
     if not _SMALL <= abs(number) < _LARGE:
@@ -112,17 +115,17 @@ def _significant(number: Decimal, digits: int, *, whole: bool) -> str:
         return f"{_plain(Decimal(mantissa), keep_zeros=False)}e{exponent}"
     place = number.adjusted() - digits + 1
     place = min(place, 0) if whole else place
-    rounded = (number.scaleb(-place)).to_integral_value(ROUND_HALF_UP).scaleb(place)
+    rounded = (number.scaleb(-place)).to_integral_value(rounding).scaleb(place)
     return _plain(rounded, keep_zeros=False)
 
 
 def _as_entered(number: Decimal) -> str:
     """With as many digits as it ends within, else three."""
     for digits in range(SIGNIFICANT, _MOST_DIGITS + 1):
-        text = _significant(number, digits, whole=True)
+        text = _significant(number, digits, ROUND_HALF_UP, whole=True)
         if abs(Decimal(text) - number) <= abs(number) * Decimal("1e-9"):
             return text
-    return _significant(number, SIGNIFICANT, whole=True)
+    return _significant(number, SIGNIFICANT, ROUND_HALF_UP, whole=True)
 
 
 def _plain(number: Decimal, *, keep_zeros: bool) -> str:

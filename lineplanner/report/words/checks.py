@@ -70,6 +70,8 @@ MESSAGES = {
     "design-authority.entered": "{part} is steel of {limit} or more, or as hard; authority entered: {authority}",
     "design-authority.missing": "{part} is steel of {limit} or more, or as hard, and no authority of the "
     "design owner is entered",
+    "design-authority.undated": "{part} is steel of {limit} or more, or as hard, and `{authority}` names no document "
+    "with its date, such as `letter of 2025-03-01`",
     "design-authority.enter": "Get the design owner's written authority, and enter document and date in the recipe",
     # the window
     "band-minimum.ok": "Low end of the band {value}, minimum {limit}",

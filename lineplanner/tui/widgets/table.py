@@ -14,6 +14,7 @@ from textual.geometry import Size
 from textual.message import Message
 from textual.strip import Strip
 
+from lineplanner.report.layout import squeezed
 from lineplanner.report.rows import Row, Table
 from lineplanner.tui.widgets.kept_lines import KeptLines
 from lineplanner.tui.widgets.text import fitted, tidy
@@ -262,8 +263,27 @@ class TableView(KeptLines, can_focus=True):
         """Cut to the window, with the bar at the right that says which part of the rows is in sight."""
         width = self.size.width
         style = segments[-1].style or self.look()
-        strip = Strip(segments).crop(self.shift, self.shift + width - 1).adjust_cell_length(width - 1, style)
-        return Strip([*strip, Segment(self._thumb(y - self.headed), self.look())], width)
+        end = self._whole_end(self.shift + width - 1)
+        strip = Strip(segments).crop(self.shift, end).adjust_cell_length(width - 1, style)
+        beyond = self.by_cell and self.shift + width - 1 < self._whole_width
+        more = ">" if beyond and y == 0 else self._thumb(y - self.headed)
+        return Strip([*strip, Segment(more, self.look())], width)
+
+    @property
+    def _whole_width(self) -> int:
+        return self.front + sum(self._widths) + self.gap * (len(self._widths) - 1)
+
+    def _whole_end(self, edge: int) -> int:
+        """Where the last column ends that is in sight as a whole: no number is cut. One alone may be."""
+        if not self.by_cell:
+            return edge
+        end, best = self.front, edge
+        for width in self._widths:
+            end += width + 1  # the bracket after a chosen cell
+            if end <= edge:
+                best = end
+            end += self.gap - 1
+        return edge if self._whole_width <= edge or best <= self.shift else best
 
     def _thumb(self, line: int) -> str:
         count, room = len(self.table.rows), self.room
@@ -301,7 +321,10 @@ class TableView(KeptLines, can_focus=True):
 
     def _cell(self, column: int, text: str) -> str:
         width = self._widths[column] if column < len(self._widths) else cell_len(text)
-        return fitted(tidy(text, ascii_only=self.ascii), width, right=column in self.table.right)
+        text = tidy(text, ascii_only=self.ascii)
+        if column == (self.giver or 0) and self.by_cell:  # names of one beginning are told apart by their end
+            text = squeezed(text, width)
+        return fitted(text, width, right=column in self.table.right)
 
     def _style(self, mark: str, *, cursor: bool) -> Style:
         tone = _TONES.get(mark)

@@ -100,7 +100,11 @@ class TableLoadView(LoadView):
 
     def compose(self) -> ComposeResult:
         yield TableView(
-            headed=self.HEADED, by_cell=self.BY_CELL, ascii_only=self.ascii, tone_column=self.tone
+            headed=self.HEADED,
+            by_cell=self.BY_CELL,
+            giver=0 if self.BY_CELL else None,
+            ascii_only=self.ascii,
+            tone_column=self.tone,
         )
 
     @property
