@@ -81,10 +81,20 @@ def _count(item: Item) -> Figure:
     return given(f"{item.name}, parts hung", float(item.count), COUNT, Source("load file", Status.ENTERED))
 
 
+def _at_level(item: Item) -> tuple[Figure, ...]:
+    """The parts that the solution level leaves out or cuts: they carry less than the faces below say."""
+    source = Source("solution level", Status.ENTERED)
+    return tuple(
+        given(f"{item.name}, of them {word} the solution", float(number), COUNT, source)
+        for word, number in (("above", item.dry), ("partly above", item.cut))
+        if number
+    )
+
+
 def _item_figures(case: Case, item: Item) -> tuple[Figure, Figure, Figure, Figure]:
     """One part's wet area, and the item's wet, carrying and significant area."""
-    count = _count(item)
-    faces = _face_figures(case, item)
+    count, faces = _count(item), _face_figures(case, item)
+    level = _at_level(item)
     name = item.name
     mean = item.wet / item.count
     each = result(
@@ -97,7 +107,15 @@ def _item_figures(case: Case, item: Item) -> tuple[Figure, Figure, Figure, Figur
         *faces,
     )
     total = result(
-        f"{name}, all, wet", item.wet, AREA, "parts x wet area, each at its place", "n A", _SUM, count, each
+        f"{name}, all, wet",
+        item.wet,
+        AREA,
+        "parts x wet area, each at its place",
+        "n A",
+        _SUM,
+        count,
+        *level,
+        each,
     )
     carrying = result(
         f"{name}, all, carrying",
@@ -107,6 +125,7 @@ def _item_figures(case: Case, item: Item) -> tuple[Figure, Figure, Figure, Figur
         "A_c = sum n A_face,c",
         _SUM,
         count,
+        *level,
         *faces,
     )
     promised = result(
@@ -117,6 +136,7 @@ def _item_figures(case: Case, item: Item) -> tuple[Figure, Figure, Figure, Figur
         "A_s = sum n A_face,s",
         _SUM,
         count,
+        *level,
         *faces,
     )
     return each, total, carrying, promised

@@ -40,9 +40,9 @@ def program_table(plan: Plan, style: Style) -> Table:
 def _stage(cells: tuple[str, ...], place: int, *, last: bool) -> Row:
     path = f"program[{place}]"
     counter = "charge_Ah.counter" if last else None
-    begin, end = f"{path}.from_s", f"{path}.to_s"
+    begin, end = f"{path}.from_s", "time.total_s" if last else f"{path}.to_s"  # the last end is solved for
     paths = (None, begin, end, end, f"{path}.to_A", f"{path}.to_V", counter, None)
-    return Row(cells, f"{path}.to_A", paths=paths)
+    return Row(cells, end if last else f"{path}.to_A", paths=paths)
 
 
 def program_said(plan: Plan, style: Style) -> list[str]:

@@ -97,6 +97,10 @@ class Session(Workbench):
         record = approved(self.record(ref), by=by, on=on)
         return self.set_record(ref, record, f"approved by {by} (recipe {recipe})")
 
+    def changed_beside(self) -> tuple[Ref, ...]:
+        """Files that the open load is planned from and that somebody else changed since they were read."""
+        return tuple(self._disk.changed(self.refs()))
+
     # --- new loads ---------------------------------------------------------------------------------------
 
     def tanks_for(self, recipe: str) -> list[tuple[str, str, str]]:

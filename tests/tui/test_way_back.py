@@ -104,3 +104,42 @@ def test_why_can_be_read_to_its_end_on_every_terminal(shop: Path, size: tuple[in
         assert "any other key closes" in text_on(pilot)
 
     drive(steps, shop, size=size)
+
+
+def test_a_recipe_changed_on_disk_while_its_load_is_open_is_noticed_at_saving(shop: Path) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await unsaved(pilot)
+        path = shop / "configs" / "recipes" / "hardcoat-50-6061.toml"
+        path.write_text(path.read_text(encoding="utf-8") + "\n# seen by somebody else\n", encoding="utf-8")
+        await pilot.press("s")
+        await pilot.pause()
+        assert f"saved: {LOAD}.toml; recipe hardcoat-50-6061 changed on disk" in text_on(pilot)
+
+    drive(steps, shop)
+
+
+def test_the_last_row_of_the_program_tells_why_these_minutes(shop: Path) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*"valve", "enter", "2", "end", "question_mark")
+        await pilot.pause()
+        assert "Why: total time" in text_on(pilot)
+        assert "time at set current" in text_on(pilot)
+
+    drive(steps, shop)
+
+
+def test_a_dry_part_is_said_to_be_dry_and_the_sum_names_those_above_the_solution(shop: Path) -> None:
+    load = shop / "rack_library" / "loads" / f"{LOAD}.toml"
+    text = load.read_text(encoding="utf-8")
+    load.write_text(text.replace('tank = "H1"', 'tank = "H1"\nsolution_drop = "520 mm"'), encoding="utf-8")
+
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*"valve", "enter")
+        await pilot.pause()
+        assert "flat, dry" in text_on(pilot)
+        assert "this one: none in the solution" in text_on(pilot)
+        await pilot.press("question_mark")
+        await pilot.pause()
+        assert "of them above the solution: 8" in text_on(pilot)
+
+    drive(steps, shop)

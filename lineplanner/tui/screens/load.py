@@ -284,7 +284,11 @@ class LoadScreen(HangingScreen):
             self.cannot(error)
             return False
         names = ", ".join(path.name for path in paths)
-        self.say(f"saved: {names}" if paths else "nothing to save: all of it is on disk")
+        text = f"saved: {names}" if paths else "nothing to save: all of it is on disk"
+        beside = ", ".join(f"{kind} {stem}" for kind, stem in self.session.changed_beside())
+        if beside:
+            text += f"; {beside} changed on disk meanwhile: open the load again"
+        self.say(text, grave=bool(beside))
         return True
 
     def action_save_as(self) -> None:
