@@ -195,6 +195,30 @@ def fitting_density(run: Run, allowed: Current, *, step: Current = 0.0) -> Curre
     return max(set_density * (allowed / asked - step / (2.0 * run.panel_current)), 0.0)
 
 
+def asked_current(run: Run, value: Current) -> Current:
+    """A demand as the recipe asks for it, where the volts leave less of it.
+
+        I_asked = max(I, I_set, peaks of the lead-in as asked)
+
+    Parameters
+        run: the program on its rectifier
+        value: I, the demand as it flows [A]
+    Returns
+        I_asked; I itself where no volts cut it [A]
+    Valid
+        a set current
+    Source
+        arithmetic
+    Example
+        >>> from types import SimpleNamespace as Record
+        >>> asked_current(Record(limit_reached=60.0, panel_current=926.0, asked=()), 904.0)
+        926.0
+    """
+    if run.limit_reached is None or run.panel_current is None:
+        return value
+    return max(value, run.panel_current, *(stage.peak for stage in run.asked))
+
+
 def firm_current(run: Run) -> bool:
     """Whether the current is set by hand; under voltage control it is only planned from a usual peak."""
     return run.set_current is not None

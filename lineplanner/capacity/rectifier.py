@@ -5,6 +5,7 @@ from collections.abc import Iterator, Mapping
 from dataclasses import replace
 
 from lineplanner.capacity.demand import (
+    asked_current,
     firm_current,
     fitting_density,
     peak_current,
@@ -153,7 +154,8 @@ def _ways_out(run: Run, case: Case, value: Current, limit: Current) -> dict[str,
         return facts
     share = _part_share(run, case)
     if share is not None:
-        off = math.ceil((value - limit) / (share * value))
+        asked = asked_current(run, value) + step / 2.0  # the panel may be set half a step higher
+        off = math.ceil((asked - limit) / (share * asked))
         if off < sum(parts_hung(h) for h in case.load.hangs):
             facts["parts_off"] = off
     return facts

@@ -143,3 +143,18 @@ def test_a_dry_part_is_said_to_be_dry_and_the_sum_names_those_above_the_solution
         assert "of them above the solution: 8" in text_on(pilot)
 
     drive(steps, shop)
+
+
+def test_unsaved_work_tells_first_how_to_save_it(shop: Path) -> None:
+    async def steps(pilot: Pilot[int]) -> None:
+        await pilot.press(*"valve", "enter")
+        await pilot.pause()
+        assert "s save" not in text_on(pilot)
+        await pilot.press("minus")
+        await pilot.pause()
+        assert "z undo  s save" in text_on(pilot)
+        await pilot.press("z", "n")
+        await pilot.pause()
+        assert "s save" not in text_on(pilot)
+
+    drive(steps, shop)

@@ -76,6 +76,7 @@ class LoadScreen(HangingScreen):
         self.views: dict[str, LoadView] = {}
         self.view = VIEWS[0]
         self.told: Plan | None = None
+        self.unsaved = False
         self.hang = 0
 
     def compose(self) -> ComposeResult:
@@ -109,7 +110,11 @@ class LoadScreen(HangingScreen):
             self.body.tell(self.session, moved)
 
     def _title(self) -> None:
-        unsaved = "   * not saved" if self.session.dirty else ""
+        dirty = bool(self.session.dirty)
+        if dirty != self.unsaved:
+            self.unsaved = dirty
+            self.hints.redraw()
+        unsaved = "   * not saved" if dirty else ""
         demo = "   (demo)" if self.session.packaged else ""
         room = max(self.size.width - len(unsaved) - len(demo) - 2, 20)
         text = f" {title_text(self.session.plan, room)}{unsaved}{demo}"
@@ -183,6 +188,13 @@ class LoadScreen(HangingScreen):
     @property
     def rack_view(self) -> RackView | None:
         return self.body if isinstance(self.body, RackView) else None
+
+    @property
+    def hinted_first(self) -> frozenset[str]:
+        """With work that is not saved, how to save it and how to take it back."""
+        if self.hanging:
+            return super().hinted_first
+        return frozenset({"save", "undo"}) if self.unsaved else frozenset()
 
     def show_bar(self) -> None:
         self.bar.show(self.view, NOTE if self.hanging else "")
