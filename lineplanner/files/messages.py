@@ -97,6 +97,7 @@ _RULES = {
     "rack.member_two_sizes": "`{name}` has a diameter beside width or thickness. Give one or the other",
     "rack.member_length": "`{name}` begins and ends at the same point. Give start and end of the piece",
     "rack.tip_step": "`{name}` has {count} tips at the same point. Give the step from one tip to the next",
+    "rack.tip_outside": "tip `{tip}` lies outside the rack. Check the row, or width and height of the rack",
     "rack.tip_name": "tip `{tip}` of row `{name}` has the same name as one of row `{other}`. Rename a row",
     "rack.surface": 'an aluminium rack must say what its metal is like: `"stripped"` (bare, takes current like '
     'the parts), `"coated"` (still has its film, takes none) or `"stopped-off"` (covered, takes none). '

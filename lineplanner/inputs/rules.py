@@ -8,12 +8,13 @@ from lineplanner.inputs.bath import Bath
 from lineplanner.inputs.declared import Path
 from lineplanner.inputs.line import Line, Rectifier, Tank
 from lineplanner.inputs.material import Material
-from lineplanner.inputs.rack import Member, Rack
+from lineplanner.inputs.rack import Member, Rack, TipRow
 from lineplanner.inputs.tables import Tables
 from lineplanner.quantities import VOLTAGE
 
 _MOST_NAMES = 20
 _NOISE = 1e-12  # relative; what two spellings of one value may differ by after conversion
+_EVEN = 1e-9  # m; what rounding leaves
 
 
 def exceeds(value: float, limit: float) -> bool:
@@ -76,12 +77,21 @@ def _tip_rows(rack: Rack) -> Iterator[Problem]:
     for index, row in enumerate(rack.tips):
         if row.count > 1 and row.step == (0.0, 0.0):
             yield Problem(("tips", index, "step"), "rack.tip_step", {"name": row.name, "count": row.count})
+        outside = next((number for number in (1, row.count) if not _on_rack(rack, row, number)), None)
+        if outside is not None:
+            yield Problem(("tips", index), "rack.tip_outside", {"tip": f"{row.name}{outside}"})
         for number in range(1, row.count + 1):
             tip = f"{row.name}{number}"
             if rows.setdefault(tip, row.name) != row.name:
                 facts = {"tip": tip, "name": row.name, "other": rows[tip]}
                 yield Problem(("tips", index, "name"), "rack.tip_name", facts)
                 break
+
+
+def _on_rack(rack: Rack, row: TipRow, number: int) -> bool:
+    """Whether a tip of a row lies within width and height of its rack."""
+    x, drop = (start + (number - 1) * step for start, step in zip(row.start, row.step, strict=True))
+    return -_EVEN <= x <= rack.width + _EVEN and -_EVEN <= drop <= rack.height + _EVEN
 
 
 # --- line ------------------------------------------------------------------------------------------------

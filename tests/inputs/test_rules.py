@@ -76,7 +76,12 @@ RACKS = [
     ({"thieves": (Thief(name="t", area=0.01),) * 2}, ("name.twice", "thieves", 1, "name")),
     ({"tips": (ROW, ROW)}, ("name.twice", "tips", 1, "name")),
     ({"tips": (replace(ROW, step=(0.0, 0.0)),)}, ("rack.tip_step", "tips", 0, "step")),
-    ({"tips": (replace(ROW, count=12), replace(ROW, name="A1"))}, ("rack.tip_name", "tips", 1, "name")),
+    (
+        {"width": 9.0, "tips": (replace(ROW, count=12), replace(ROW, name="A1"))},
+        ("rack.tip_name", "tips", 1, "name"),
+    ),
+    ({"width": 0.005, "tips": (ROW,)}, ("rack.tip_outside", "tips", 0)),
+    ({"tips": (replace(ROW, start=(0.01, 9.0)),)}, ("rack.tip_outside", "tips", 0)),
 ]
 
 
