@@ -77,10 +77,10 @@ RACKS = [
     ({"tips": (ROW, ROW)}, ("name.twice", "tips", 1, "name")),
     ({"tips": (replace(ROW, step=(0.0, 0.0)),)}, ("rack.tip_step", "tips", 0, "step")),
     (
-        {"width": 9.0, "tips": (replace(ROW, count=12), replace(ROW, name="A1"))},
+        {"height": 9.0, "tips": (replace(ROW, count=12), replace(ROW, name="A1"))},
         ("rack.tip_name", "tips", 1, "name"),
     ),
-    ({"width": 0.005, "tips": (ROW,)}, ("rack.tip_outside", "tips", 0)),
+    ({"tips": (ROW, replace(ROW, name="B", count=40))}, ("rack.tip_outside", "tips", 1)),
     ({"tips": (replace(ROW, start=(0.01, 9.0)),)}, ("rack.tip_outside", "tips", 0)),
 ]
 
