@@ -25,7 +25,7 @@ TARGETS = {
     "80x24": {"selection": 15e-3, "carry": 15e-3, "count": 25e-3, "undo and redo": 25e-3, "level": 25e-3},
     "160x50": {"selection": 25e-3, "carry": 25e-3, "count": 40e-3, "undo and redo": 40e-3, "level": 40e-3},
 }
-_LOAD = "a-big-one"
+_LOAD, _MANY = "a-big-one", 100
 _TO_AND_FRO = ("\x1b[C", "\x1b[D")  # the first part of a row to its spare tip at the other end, and back
 
 Gestures = Callable[[Screen], Iterator[Repaint]]
@@ -42,8 +42,11 @@ def run() -> None:
         make_site(site)
         for name, size in SIZES.items():
             home = Path(folder) / name
-            for gesture, found in _measured(site, home, size).items():
-                _show(f"{gesture}, {name}", found, TARGETS[name][gesture])
+            found = _measured(site, home, size)
+            burst = found.pop("burst")
+            for gesture, each in found.items():
+                _show(f"{gesture}, {name}", each, TARGETS[name][gesture])
+            print(f"  {f'{_MANY} keys at once, {name}':28}{burst[0].last * 1e3:7.0f} ms{'':10}    250 ms")
 
 
 def make_site(folder: Path) -> None:
@@ -117,6 +120,7 @@ def _measured(site: Path, home: Path, size: tuple[int, int]) -> dict[str, list[R
             "count": list(_with_setpoints(_pressed(screen, "-+"))),
             "undo and redo": list(_with_setpoints(_pressed(screen, "zy"))),
         }
+        found["burst"] = [screen.repaint("n" * _MANY)]
         screen.type("h")
         found["carry"] = list(_pressed(screen, _TO_AND_FRO))
         screen.type("h")

@@ -7,6 +7,7 @@
 import platform
 import sys
 
+import filling
 import gestures
 import replan
 import screens
@@ -19,6 +20,7 @@ BENCHMARKS = {
     "replan": replan.run,
     "screens": screens.run,
     "gestures": gestures.run,
+    "filling": filling.run,
 }
 
 
