@@ -15,7 +15,7 @@ if TYPE_CHECKING:
 INTERRUPTED = 130
 NEW_OBJECTS = 200_000  # more than a plan makes: a command ends before the collector would find anything
 
-SESSION_OBJECTS = 50_000  # a long run collects as it goes, a start does not
+SESSION_OBJECTS = 300_000  # the screens collect between keys, not while one is answered
 
 
 def main(arguments: list[str] | None = None) -> int:

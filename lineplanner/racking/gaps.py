@@ -27,6 +27,7 @@ Pair = tuple[int, int]
 _FINE: Length = 5e-5  # chords stay within this of their arc: a gap is not wider than so much more
 _TOUCH: Length = 1e-6  # outlines that meet by less than this do not overlap
 _DIGITS = 7  # decimals of an offset or a gap in m: what is smaller is noise
+_SOME = 24  # pairs that are measured first, to know how far to look
 _OUTLINES: Memo[Part, Polygon] = Memo(1024)
 _DISTANCES: Memo[Part, tuple[Part, Length]] = Memo(8192)
 
@@ -147,15 +148,17 @@ def _pairs(side: _Side, kinds: Sequence[Kind], wanted: Length) -> tuple[Indices,
     """Numbers (m, 2) and gaps (m) of all pairs that may have the least gap, or one below what is wanted.
 
     Boxes are never farther apart than the outlines in them: the least gap is among boxes that are as near as
-    the nearest outlines of parts that follow each other. A gap below 0 is an overlap.
+    the nearest outlines of some parts that follow each other. A gap below 0 is an overlap.
     """
     if len(side.numbers) < 2:
         return np.empty((0, 2), dtype=np.int64), np.empty(0)
     at_origin = np.array([box_of(kind) for kind in kinds])
-    boxes: Any = shapely.box(*(at_origin[side.kinds] + np.hstack((side.points, side.points))).T)
-    each = np.arange(len(side.numbers))
-    bound = float(_gaps(side, kinds, each[:-1], each[1:]).min())
-    one, other = STRtree(boxes).query(boxes, predicate="dwithin", distance=max(bound, wanted, 0.0) + _TOUCH)
+    edges = at_origin[side.kinds] + np.hstack((side.points, side.points))
+    some = np.arange(0, len(side.numbers) - 1, max(len(side.numbers) // _SOME, 1))
+    bound = max(float(_gaps(side, kinds, some, some + 1).min()), wanted, 0.0) + _TOUCH
+    boxes: Any = shapely.box(*edges.T)
+    around: Any = shapely.box(*(edges + bound * np.array((-1.0, -1.0, 1.0, 1.0))).T)
+    one, other = STRtree(boxes).query(around)
     one, other = one[one < other], other[one < other]
     return np.column_stack((side.numbers[one], side.numbers[other])), _gaps(side, kinds, one, other)
 

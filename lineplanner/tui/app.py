@@ -10,6 +10,7 @@ import signal
 import sys
 from collections.abc import Callable
 from functools import partial
+from time import monotonic
 from typing import TYPE_CHECKING, ClassVar
 
 from textual import events
@@ -34,6 +35,7 @@ if TYPE_CHECKING:
 Kept = Callable[[BaseException], str]
 """Keeps a fault in a log and says so in a sentence."""
 FAULT, HUNG_UP = 3, 129
+TIDY = 2.0  # s between two looks whether there is time to collect
 UNPROTECTED = "no journal can be written: save often, unsaved work would be lost with the program"
 
 
@@ -57,6 +59,8 @@ class PlannerApp(App[int], inherit_bindings=False):
         self.session, self.kept = session, kept
         self.keeps_journal = isinstance(session, Opening) and session.memory is not None
         self.fault = ""
+        self.pressed = False
+        self.last_key = 0.0
         for one in theme.THEMES:
             self.register_theme(one)
         # Set before anybody watches it: the styles are then worked out once for it, not twice.
@@ -70,6 +74,7 @@ class PlannerApp(App[int], inherit_bindings=False):
 
     def on_mount(self) -> None:
         self._listen_for_hang_up()
+        self.set_interval(TIDY, self._tidy)
         self.push_screen(LoadsScreen(self.session))
         if not isinstance(self.session, Opening):
             self.call_after_refresh(self._begin, self.session)
@@ -95,7 +100,15 @@ class PlannerApp(App[int], inherit_bindings=False):
         if isinstance(self.screen, PlannerScreen):
             self.screen.say(text, grave=grave)
 
+    def _tidy(self) -> None:
+        """Collect what the last keys left behind, while nobody waits for an answer."""
+        if self.pressed and monotonic() - self.last_key > TIDY / 2:
+            self.pressed = False
+            gc.collect(1)
+
     async def on_event(self, event: events.Event) -> None:
+        if isinstance(event, events.InputEvent):
+            self.pressed, self.last_key = True, monotonic()
         # A key comes by twice, the second time when it is acted on: one repaint then. A field may keep it.
         if (
             isinstance(event, events.Key)

@@ -265,12 +265,11 @@ class LoadScreen(HangingScreen):
         return not elsewhere
 
     def _back(self, step: Callable[[], str | None], word: str) -> None:
-        """A step through what was done; in hand is then what it put back."""
+        """A step through what was done; while hanging, in hand is then what it put back."""
         before = self.session.case.load
         label = step()
-        changed = changed_places(before, self.session.case.load)
-        if changed and self.rack_view is not None:
-            self.rack_view.hand.hold(changed[:1])
+        if self.hanging and self.rack_view is not None:
+            self.rack_view.hand.hold(changed_places(before, self.session.case.load)[:1] or self.hand.keys)
         self._step(label, word)
 
     def _step(self, label: str | None, word: str) -> None:

@@ -44,9 +44,14 @@ class Hints(KeptLines):
         self.first = first
         self.ascii = ascii_only
         self.said, self.grave = "", False
+        self._known: dict[frozenset[str], list[tuple[str, str]]] = {}
 
     def on_mount(self) -> None:
-        self.screen.bindings_updated_signal.subscribe(self, lambda _: self.redraw())
+        self.screen.bindings_updated_signal.subscribe(self, lambda _: self._renewed())
+
+    def _renewed(self) -> None:
+        self._known = {}
+        self.redraw()
 
     def say(self, text: str, *, grave: bool = False) -> None:
         """Say something until the next key."""
@@ -55,9 +60,14 @@ class Hints(KeptLines):
             self.redraw()
 
     def _hints(self) -> list[tuple[str, str]]:
-        """Key and what it does, each action once, in the order of the bindings."""
+        """Key and what it does, each action once, in the order of the bindings; known until bindings change."""
+        wanted: frozenset[str] = getattr(self.screen, "hinted_first", frozenset())
+        if wanted not in self._known:
+            self._known[wanted] = self._listed(wanted)
+        return self._known[wanted]
+
+    def _listed(self, first: frozenset[str]) -> list[tuple[str, str]]:
         found: dict[str, tuple[str, str]] = {}
-        first: frozenset[str] = getattr(self.screen, "hinted_first", frozenset())
         bindings = sorted(
             self.screen.active_bindings.items(),
             key=lambda one: (one[1].node is self.app, one[1].binding.action.partition("(")[0] not in first),
