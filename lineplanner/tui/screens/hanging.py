@@ -80,20 +80,18 @@ class HangingScreen(PlannerScreen):
 
     @property
     def rack_view(self) -> RackView | None:
-        """The picture, where it is in sight."""
-        raise NotImplementedError
+        """The picture, where it is in sight; a screen without one hangs nothing."""
+        return None
 
-    def edit(self, change: Callable[[Load], Load], label: str) -> bool:
-        """One edit of the load; False where it is refused."""
-        raise NotImplementedError
+    def edit(self, change: Callable[[Load], Load], label: str) -> bool:  # noqa: ARG002 - the load screen's
+        """One edit of the load; False where it is refused, as here where no load is shown."""
+        return False
 
     async def action_view(self, name: str) -> None:
-        """Another view."""
-        raise NotImplementedError
+        """Another view, where there are several."""
 
     def show_bar(self) -> None:
-        """The bar of views as it has to be now."""
-        raise NotImplementedError
+        """Show the bar of views anew, where there is one."""
 
     def check_action(self, action: str, parameters: tuple[object, ...]) -> bool | None:
         if action in _WHILE_HANGING and not (self.hanging and self.rack_view is not None):

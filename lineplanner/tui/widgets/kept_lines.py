@@ -27,9 +27,9 @@ class KeptLines(Widget):
         self._kept_size = Size(0, 0)
         super().__init__(name=name, id=id, classes=classes)
 
-    def draw_line(self, y: int) -> Strip:
-        """One line as it has to look now."""
-        raise NotImplementedError
+    def draw_line(self, y: int) -> Strip:  # noqa: ARG002 - each widget has its own
+        """One line as it has to look now; blank unless a widget says otherwise."""
+        return Strip.blank(self.size.width, self.look())
 
     def redraw(self) -> None:
         """Draw all lines in sight anew and repaint those that differ from what was drawn last."""
