@@ -17,7 +17,8 @@ class More:
 
     fits places are free with gaps of at least spacing in m; asked says that the recipe names that gap. carried
     of them the line carries without a stop; stop is what forbids one more, None where only the room ends.
-    racked is the load with those carried hung, made its plan.
+    racked is the load with those carried hung, made its plan. begun says that none hung before: the first one
+    counts among them, and hangs in racked even if it is not carried.
     """
 
     part: str
@@ -28,14 +29,15 @@ class More:
     stop: Finding | None
     racked: Racked
     made: Plan
+    begun: bool = False
 
 
-def how_many_more(case: Case, key: Key) -> More:
+def how_many_more(case: Case, key: Key, *, begun: bool = False) -> More:
     """How many more of the part at a place of the load. Raises InputError where there is no such place.
 
     Amperes rise with every part, so what the line carries is found by halving; a load that a stop forbids as
     it hangs takes no more. Where the recipe names no gap, free positions keep the least gap that hangs there,
-    and on tips parts are only kept from overlapping.
+    and on tips parts are only kept from overlapping. begun: the part at the place was hung only to ask.
     """
     low, made = 0, plan(case)
     stop = _stop(made)
@@ -52,11 +54,12 @@ def how_many_more(case: Case, key: Key) -> More:
             low, made, stop = _most(case, key, places, made, stop)
     return More(
         part=case.load.hangs[key[0]].part,
-        fits=len(places),
+        fits=len(places) + begun,
         spacing=wanted,
         asked=case.recipe.spacing is not None,
-        carried=low,
+        carried=0 if stop is not None and made.stopped else low + begun,
         stop=stop,
+        begun=begun,
         racked=hung(case, key, places[:low]),
         made=made,
     )

@@ -141,7 +141,7 @@ def fill_command(load: str, part: str, *, as_json: bool, **rest: Any) -> Output:
     if entry is None:
         record = site.library.record("part", part)
         case, key = with_first(case, part, record, site.library.record("material", record.material))
-    more = how_many_more(case, key)
+    more = how_many_more(case, key, begun=entry is None)
     if as_json:
         return Output(more_json(more, site.plain), STOPPED if more.made.stopped else 0)
     return site.output(more_text(more, site.style), STOPPED if more.made.stopped else 0)

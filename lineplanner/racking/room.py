@@ -7,16 +7,17 @@ from dataclasses import dataclass, field, replace
 import numpy as np
 from numpy.typing import NDArray
 
+from lineplanner.errors import InputError
 from lineplanner.inputs.case import Case
 from lineplanner.inputs.hanging import tip_places
+from lineplanner.inputs.load import Hang
 from lineplanner.inputs.material import Material
 from lineplanner.inputs.part import Part
 from lineplanner.inputs.rack import Spot
 from lineplanner.quantities import Length
 from lineplanner.racking.gaps import Kind, box_of, gap, kind_of
-from lineplanner.racking.moves import added
 from lineplanner.racking.places import Key, Place, Racked, in_hand, places_of, racked
-from lineplanner.racking.tips import groups_after, middle, sides_of, taken_of
+from lineplanner.racking.tips import free_groups, groups_after, middle, sides_of, taken_of
 
 _DUST: Length = 1e-9
 _ROWS = 1000  # no rack has more rows or columns of parts
@@ -83,10 +84,24 @@ def room_for(case: Case, key: Key, wanted: Length = 0.0) -> list[Place]:
 
 
 def with_first(case: Case, part: str, record: Part, material: Material) -> tuple[Case, Key]:
-    """The case with one part that does not hang there yet on the first free place. Raises InputError."""
-    new = added(case.load, case.rack, part)
+    """The case with one part that does not hang there yet on the first place that leaves room for it.
+
+    Raises InputError where there is none.
+    """
     parts, materials = {**case.parts, part: record}, {**case.materials, record.material: material}
-    return replace(case, load=new.load, parts=parts, materials=materials), new.keys[0]
+    case = replace(case, parts=parts, materials=materials)
+    hanging, how = list(places_of(case.load).values()), Hang(part=part)
+    wanted = case.recipe.spacing or 0.0
+    if case.rack.hanging == "free":
+        found = _anywhere(case, Place(how, None, at=(0.0, 0.0)), hanging, wanted)
+    else:
+        found = _on_tips(case, Place(how, None), hanging, wanted)
+    if not found:
+        tips_left = any(free_groups(case.rack, how, taken_of(case.load)))
+        free = case.rack.hanging == "free" or tips_left
+        raise InputError("racking.no_room" if free else "racking.no_tip", rack=case.load.rack)
+    new = racked(case.load, [*hanging, found[0]], found[:1])
+    return replace(case, load=new.load), new.keys[0]
 
 
 def hung(case: Case, key: Key, more: list[Place]) -> Racked:

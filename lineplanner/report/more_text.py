@@ -18,8 +18,11 @@ FORMAT = "lineplanner fill 1"
 def more_lines(more: More, style: Style) -> list[str]:
     """What fits, what is carried, what stops one more; then the setpoints with those carried."""
     name = more.made.case.parts[more.part].name
-    lines = [f"{name}: {more.fits} more fit {_gaps(more, style)}"]
-    if more.stop is None:
+    lines = [f"{name}: {more.fits} {'' if more.begun else 'more '}fit {_gaps(more, style)}"]
+    if more.stop is not None and more.made.stopped:
+        as_is = "even one of them" if more.begun else "the load as it hangs"
+        lines.append(f"{as_is} is stopped by {_stopped(more, style)}")
+    elif more.stop is None:
         lines.append(
             f"the line carries {'all of them' if more.fits else 'the load as it hangs'}: only the room ends"
         )
@@ -33,10 +36,12 @@ def more_lines(more: More, style: Style) -> list[str]:
 
 def more_text(more: More, style: Style) -> str:
     """The lines, and the load with those that are carried: where it hangs, what to set, whether it may run."""
-    hung = [f"with {more.carried} more: {place}" for place in places_said(more.made, style)]
+    count = more.carried or int(more.begun)
+    head = f"with {count} {'of them' if more.begun else 'more'}" if count else "as it hangs"
+    hung = [f"{head}: {place}" for place in places_said(more.made, style)]
     below = [text for line in hung for text in wrapped(line, rest="  ")]
-    head = [*setpoint_lines(more.made, style), verdict_line(more.made, style)]
-    return "\n".join([*more_lines(more, style), "", *below, "", *head])
+    shown = [*setpoint_lines(more.made, style), verdict_line(more.made, style)]
+    return "\n".join([*more_lines(more, style), "", *below, "", *shown])
 
 
 def more_json(more: More, style: Style) -> str:

@@ -69,7 +69,11 @@ def test_a_part_that_does_not_hang_yet_begins_at_the_first_free_place() -> None:
     record = LIBRARY.record("part", "test-coupon")
     begun, key = with_first(case, "test-coupon", record, LIBRARY.record("material", record.material))
     assert begun.load.hangs[key[0]].tips == ("A2",)
-    assert how_many_more(begun, key).fits == 22
+    asked = how_many_more(begun, key, begun=True)
+    assert (asked.fits, asked.carried) == (23, 23)  # every free tip, the first among them
+    assert asked.made.areas.items[1].count == 23
+    refused, key = with_first(weak(1.0, "A1"), "test-coupon", record, begun.materials[record.material])
+    assert how_many_more(refused, key, begun=True).carried == 0
     full = weak(400.0, "A1-A4", "B1-B4", "C1-C4", "D1-D4", "E1-E4", "F1-F4")
     with pytest.raises(InputError, match=r"racking\.no_tip"):
         with_first(full, "test-coupon", record, LIBRARY.record("material", record.material))

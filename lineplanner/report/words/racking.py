@@ -10,6 +10,7 @@ MESSAGES = {
     "racking.last": "one part stays: a load holds at least one",
     "racking.last_of_entry": "one part is left here: take the whole entry out in the records",
     "racking.no_tip": "no free tip is left on rack {rack}",
+    "racking.no_room": "no free place on rack {rack} leaves room for the part",
     "racking.no_tip_there": "no free tip {direction} of here on rack {rack}",
     "racking.not_all_there": "the {count} parts in hand do not all find a free tip that way",
     "racking.no_side": "the tips are taken on their other side, or do not reach there, on rack {rack}",
